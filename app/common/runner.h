@@ -32,6 +32,7 @@ protected:
     std::uint64_t start(Work work, std::function<void(std::uint64_t, std::shared_ptr<void>)> deliver);
 
 private:
+    void finish();
     struct Private;
     std::unique_ptr<Private> p_;
 };

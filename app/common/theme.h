@@ -6,6 +6,8 @@
 #include <QObject>
 #include <QString>
 
+class QWidget;
+
 // Terms. A theme is a set of tokens (resources/themes/*.json): colours by their use. Tokens are read when painting,
 // never stored in a palette, pen or chart item of a widget, so that a change of theme leaves nothing behind.
 namespace filial::app {
@@ -39,6 +41,8 @@ public:
     ThemeName name() const;
     /// Installs palette, style and fonts on the QApplication; callable again to switch.
     void apply(ThemeName name);
+    /// The tokens of any theme, without installing it.
+    static Tokens read(ThemeName name);
 Q_SIGNALS:
     void changed();
 
@@ -53,5 +57,18 @@ inline const Tokens& tokens() {
 }
 QFont font(TextRole role);
 int lineHeight(TextRole role);
+
+/// The ink a label is written in, as a palette role, so that it follows a change of theme by itself.
+enum class Ink { Normal, Muted, Accent, Error, Warning };
+void setInk(QWidget* widget, Ink ink);
+
+/// Looks a widget can ask the style for by a dynamic property.
+namespace look {
+inline constexpr const char* kPrimary = "primary"; ///< the one filled button of a screen
+inline constexpr const char* kQuiet = "quiet";     ///< a button without a frame
+inline constexpr const char* kInvalid = "invalid"; ///< a field whose text does not do
+inline constexpr const char* kBare = "bare";       ///< a field without a frame, a blank in a sentence
+} // namespace look
+void setLook(QWidget* widget, const char* name, bool on = true);
 
 } // namespace filial::app

@@ -39,6 +39,11 @@ public:
     void undo();
     void redo();
 
+    /// File acts of the session; what came of them is said or refused.
+    bool save();
+    bool saveAs(const QString& path);
+    bool revertToSaved();
+
     /// Live preview: the current cross with an editor's valid text in it, not yet committed. Empty optional drops it.
     void setPreview(std::optional<book::Cross> preview);
     /// The cross to show: preview where there is one, else the current cross.
@@ -61,6 +66,9 @@ Q_SIGNALS:
     void refused(const QString& sentence); ///< an edit or file action that failed, with its reason
 
 private:
+    void afterChange();
+    void rememberPlace();
+    bool tell(const Done& result, const QString& sentence);
     struct Private;
     std::unique_ptr<Private> p_;
 };
