@@ -60,26 +60,40 @@ public:
 
     [[nodiscard]] std::size_t class_count() const;
     [[nodiscard]] const std::vector<FreeParameter>& free_parameters() const { return free_parameters_; }
-    /// Class probabilities at beta; beta.size() == free_parameters().size(), each within its bounds.
+    /// Class probabilities at beta; beta.size() == free_parameters().size(), each within its bounds; anything else
+    /// throws std::invalid_argument.
     [[nodiscard]] ClassProbabilities at(std::span<const double> beta) const;
-    /// The exact ratio, where no real parameter enters.
+    /// The exact ratio, in the order of the classes after `bind`, where no real parameter enters.
     [[nodiscard]] const ratio::Ratio* ratio() const;
-    /// The linked cross, where it is one.
+    /// The linked cross, where it is one. Its classes stand in the order of `binding()`; a closed form that names
+    /// the classes must go through it.
     [[nodiscard]] const LinkedCross* linked_cross() const;
+    /// Class i is term binding()[i] of the notation; as long as there are classes (0, 1, 2, … where never bound).
+    [[nodiscard]] const std::vector<std::size_t>& binding() const { return binding_; }
     [[nodiscard]] Origin origin() const { return origin_; }
-    /// Text that `read_hypothesis` reads back to an equal hypothesis.
-    [[nodiscard]] std::string notation() const;
+    /// Text that `read_hypothesis` reads back to an equal hypothesis; that of the unbound one after `bind`.
+    [[nodiscard]] const std::string& notation() const { return notation_; }
     /// "9 of 16" for a ratio; for a cross with r, its genotype class (A_B_).
     [[nodiscard]] std::string term_text(std::size_t term) const;
 
-    friend bool operator==(const Hypothesis&, const Hypothesis&) = default;
+    /// Same model and same order of classes; where a hypothesis came from does not make it another one.
+    friend bool operator==(const Hypothesis& left, const Hypothesis& right) {
+        return left.model_ == right.model_ && left.binding_ == right.binding_;
+    }
+    friend Result<Hypothesis> bind(const Hypothesis& hypothesis, std::span<const std::size_t> binding);
 
 private:
-    Hypothesis(std::variant<ratio::Ratio, LinkedCross> model, Origin origin);
-    std::variant<ratio::Ratio, LinkedCross> model_;
+    Hypothesis(std::variant<ratio::Ratio, LinkedCross> model, std::string notation, Origin origin);
+    std::variant<ratio::Ratio, LinkedCross> model_; ///< a ratio in class order; a linked cross in term order
+    std::vector<std::size_t> binding_;
+    std::string notation_;
     std::vector<FreeParameter> free_parameters_;
     Origin origin_ = Origin::Typed;
 };
+
+/// The hypothesis with its terms in class order: class i is term binding[i]. Empty: in order. Errors: not every term
+/// exactly once. Call it as inheritance::bind: unqualified, std::bind is found for standard arguments.
+[[nodiscard]] Result<Hypothesis> bind(const Hypothesis& hypothesis, std::span<const std::size_t> binding);
 
 /// Reads the notation. Errors give the byte place, what was found and what is allowed.
 [[nodiscard]] Result<Hypothesis> read_hypothesis(std::string_view text);

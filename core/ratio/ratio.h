@@ -3,6 +3,7 @@
 
 #include <cstddef>
 #include <cstdint>
+#include <span>
 #include <string>
 #include <string_view>
 #include <vector>
@@ -32,7 +33,10 @@ public:
     [[nodiscard]] const std::string& notation() const { return notation_; }
     /// One term as shown beside a class: "9 of 16", or as typed where it was a decimal or a percentage.
     [[nodiscard]] std::string term_text(std::size_t term) const;
-    /// Percentages that did not add to 100 and were scaled; a warning to show.
+    /// The same terms in another order: term i is this ratio's term order[i]. `order` names every term once; anything
+    /// else throws std::invalid_argument.
+    [[nodiscard]] Ratio permuted(std::span<const std::size_t> order) const;
+    /// Percentages that did not add to 100, or fractions that did not add to 1, and were scaled; warnings to show.
     [[nodiscard]] const std::vector<Message>& warnings() const { return warnings_; }
 
     /// Equality on lowest terms: 10:6 equals 5:3.
@@ -48,9 +52,10 @@ private:
     std::vector<Message> warnings_;
 };
 
-/// Reads the notation above. Errors carry the byte place of the offending term and what is allowed: negative,
-/// NaN or other text, all zero, fewer than two or more than 64 terms, weights whose common denominator or sum
-/// passes 2^62.
+/// Reads the notation above. Terms are separated by one of : ; , or by blanks, never mixed; the decimal sign is a point
+/// (a decimal comma is refused by name). Errors carry the byte place of the offending term and what is allowed:
+/// negative, NaN or other text, all zero, fewer than two or more than 64 terms, weights whose common denominator or sum
+/// passes 2^62, percentages mixed with other terms.
 [[nodiscard]] Result<Ratio> read_ratio(std::string_view text);
 
 } // namespace filial::ratio
