@@ -50,7 +50,12 @@ const Counts& tables() {
 }
 
 fit::Input input(const std::string& notation, const std::vector<Count>& observed) {
-    fit::Input result{.labels = {}, .observed = observed, .hypothesis = inheritance::read_hypothesis(notation).value()};
+    fit::Input result{.labels = {},
+                      .observed = observed,
+                      .hypothesis = inheritance::read_hypothesis(notation).value(),
+                      .joins = {},
+                      .level_counts = {},
+                      .trait_names = {}};
     for (std::size_t i = 0; i < observed.size(); ++i)
         result.labels.push_back("class " + std::to_string(i + 1));
     return result;
