@@ -82,13 +82,9 @@ TableRow expected_row(const CrossAnalysis& analysis) {
     return row;
 }
 
-std::string row_p(const Maybe<fit::Tail>& p) {
-    return shown_p(p);
-}
-
 void add_source_row(Table& table, MessageId what, const families::SourceRow& row, TableRow::Role role) {
-    table.rows.push_back({{say(what), shown_count(row.df), statistic_text(row.chi_square), row_p(row.chi_square_p),
-                           statistic_text(row.g), row_p(row.g_p)},
+    table.rows.push_back({{say(what), shown_count(row.df), shown_statistic(row.chi_square), shown_p(row.chi_square_p),
+                           shown_statistic(row.g), shown_p(row.g_p)},
                           role});
 }
 
@@ -104,40 +100,40 @@ void add_overdispersion(Document& document, const families::Overdispersion& extr
 void add_source_tail(Table& table, const families::Heterogeneity& result) {
     if (result.contingency) {
         table.rows.push_back({{say(MessageId::ReportBetweenContingency), shown_count(result.contingency->df),
-                               statistic_text(result.contingency->statistic), row_p(result.contingency->p), "", ""},
+                               statistic_text(result.contingency->statistic), shown_p(result.contingency->p), "", ""},
                               TableRow::Role::Body});
     }
 }
 
-/// The same cross with every family back in.
-book::Cross with_all_families(const book::Cross& cross) {
-    book::Cross all = cross;
-    for (book::Family& family : all.families) {
-        family.set_aside.reset();
-    }
-    return all;
-}
-
-AnalysisOptions options_of(const CrossAnalysis& analysis) {
-    AnalysisOptions options;
-    if (analysis.totals) {
-        const fit::Input& input = analysis.totals->input;
-        options.alpha = input.alpha;
-        options.method = input.method;
-        options.order = input.order;
-        options.replicates = input.replicates;
-        options.seed = input.seed;
-    }
-    return options;
-}
-
-TableRow comparison_row(MessageId what, const CrossAnalysis& analysis) {
+TableRow comparison_row(MessageId what, std::size_t families, const std::optional<fit::GoodnessOfFit>& totals,
+                        const std::optional<families::Heterogeneity>& heterogeneity) {
     TableRow row;
-    row.cells = {say(what), shown_count(static_cast<std::int64_t>(analysis.included)), shown_count(analysis.total)};
-    append_fit(row.cells, analysis.totals, false);
-    const bool between = analysis.heterogeneity && analysis.heterogeneity->contingency;
-    row.cells.push_back(between ? row_p(analysis.heterogeneity->contingency->p) : "–");
+    row.cells = {say(what), shown_count(static_cast<std::int64_t>(families)), totals ? shown_count(totals->n) : "–"};
+    append_fit(row.cells, totals, false);
+    const bool between = heterogeneity && heterogeneity->contingency;
+    row.cells.push_back(between ? shown_p(heterogeneity->contingency->p) : "–");
     return row;
+}
+
+/// Families set aside that would enter the totals: complete and with plants.
+std::size_t set_aside_with_plants(const CrossAnalysis& analysis) {
+    return static_cast<std::size_t>(
+        std::count_if(analysis.families.begin(), analysis.families.end(),
+                      [](const FamilyAnalysis& f) { return f.state == FamilyState::SetAside && f.fit; }));
+}
+
+void add_both_analyses(Document& document, const CrossAnalysis& analysis) {
+    Table both;
+    both.columns.push_back({say(MessageId::ReportAnalysis), Align::Left});
+    for (const MessageId id : {MessageId::ReportFamilies, MessageId::ReportPlants, MessageId::ReportChiSquare,
+                               MessageId::ReportDf, MessageId::ReportP, MessageId::ReportPBetween}) {
+        both.columns.push_back({say(id), Align::Right});
+    }
+    both.rows.push_back(
+        comparison_row(MessageId::ReportWithout, analysis.included, analysis.totals, analysis.heterogeneity));
+    both.rows.push_back(comparison_row(MessageId::ReportWith, analysis.included + set_aside_with_plants(analysis),
+                                       analysis.totals_with_set_aside, analysis.heterogeneity_with_set_aside));
+    document.blocks.emplace_back(std::move(both));
 }
 
 } // namespace
@@ -238,15 +234,9 @@ void add_set_aside(Document& document, const book::Cross& cross, const CrossAnal
     }
     add_heading(document, 2, say(MessageId::ReportSetAside));
     document.blocks.emplace_back(std::move(table));
-    Table both;
-    both.columns.push_back({say(MessageId::ReportAnalysis), Align::Left});
-    for (const MessageId id : {MessageId::ReportFamilies, MessageId::ReportPlants, MessageId::ReportChiSquare,
-                               MessageId::ReportDf, MessageId::ReportP, MessageId::ReportPBetween}) {
-        both.columns.push_back({say(id), Align::Right});
+    if (analysis.totals_with_set_aside) {
+        add_both_analyses(document, analysis);
     }
-    both.rows.push_back(comparison_row(MessageId::ReportWithout, analysis));
-    both.rows.push_back(comparison_row(MessageId::ReportWith, analyse(with_all_families(cross), options_of(analysis))));
-    document.blocks.emplace_back(std::move(both));
 }
 
 void add_incomplete(Document& document, const CrossAnalysis& analysis) {

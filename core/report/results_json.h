@@ -14,7 +14,10 @@ namespace filial::report {
 
 [[nodiscard]] std::string to_json(const fit::GoodnessOfFit& result);
 [[nodiscard]] std::string to_json(const families::Heterogeneity& result);
-[[nodiscard]] std::string to_json(const CrossAnalysis& result); ///< per_family, totals, heterogeneity
+/// `per_family` (with its label), `totals`, `heterogeneity`, and the families left out of them by label.
+[[nodiscard]] std::string to_json(const CrossAnalysis& result);
+/// What `filial families` answers: as for Heterogeneity, with labels and the families left out.
+[[nodiscard]] std::string families_json(const CrossAnalysis& result);
 [[nodiscard]] std::string to_json(const inheritance::Derivation& result);
 
 } // namespace filial::report
