@@ -16,17 +16,22 @@ struct Wording {
     std::string_view text;
 };
 
-constexpr std::array kEnglish{
+// Lists of their own length first: clang deduces no std::array of more than 256 members.
+constexpr Wording kEnglishList[] = {
+    // NOLINT: made into a std::array below
 #define FILIAL_WORDING(name, text) Wording{#name, text},
 #include "core/report/wording_en.inc"
 #undef FILIAL_WORDING
 };
 
-constexpr std::array kNames {
+constexpr std::string_view kNamesList[] = {
+    // NOLINT: likewise
 #define FILIAL_MESSAGE(name) std::string_view{#name},
 #include "core/numeric/message_ids.inc"
 #undef FILIAL_MESSAGE
 };
+constexpr auto kEnglish = std::to_array(kEnglishList);
+constexpr auto kNames = std::to_array(kNamesList);
 
 constexpr bool same_order() {
     for (std::size_t i = 0; i < std::min(kNames.size(), kEnglish.size()); ++i) {
