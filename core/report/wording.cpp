@@ -18,14 +18,12 @@ struct Wording {
 
 // Lists of their own length first: clang deduces no std::array of more than 256 members.
 constexpr Wording kEnglishList[] = {
-    // NOLINT: made into a std::array below
 #define FILIAL_WORDING(name, text) Wording{#name, text},
 #include "core/report/wording_en.inc"
 #undef FILIAL_WORDING
 };
 
 constexpr std::string_view kNamesList[] = {
-    // NOLINT: likewise
 #define FILIAL_MESSAGE(name) std::string_view{#name},
 #include "core/numeric/message_ids.inc"
 #undef FILIAL_MESSAGE
