@@ -5,6 +5,7 @@
 #include <cstdint>
 #include <optional>
 #include <string>
+#include <utility>
 #include <vector>
 
 #include "core/inheritance/hypothesis.h"
@@ -65,12 +66,12 @@ struct Charge {
 };
 
 struct ChiSquare {
-    double statistic = 0.0;
+    double statistic = 0.0; ///< infinite, with P 0, where a forbidden class has offspring (null in JSON)
     Maybe<Tail> p;
     Maybe<double> p_too_close; ///< left tail P(X <= x)
 };
 struct LikelihoodRatio {
-    double statistic = 0.0;
+    double statistic = 0.0; ///< infinite, with P 0, where a forbidden class has offspring (null in JSON)
     Maybe<Tail> p;
     Maybe<double> williams_statistic; ///< customary q = 1 + (k+1)/(6N), Williams 1976
     Maybe<Tail> williams_p;
@@ -107,7 +108,7 @@ struct PartitionRow {
 struct Estimate {
     std::string name; ///< "r"
     double value = 0.0;
-    Maybe<double> standard_error;
+    Maybe<double> standard_error; ///< from the expected information
     bool at_boundary = false;
 };
 struct Detectable {
@@ -117,9 +118,12 @@ struct Detectable {
     std::size_t class_index = 0;     ///< which class the percentage points are about
 };
 
+/// By the exact P where there is one and the method is not ChiSquare, else by the P of X2; against the user's alpha.
 enum class Verdict : std::uint8_t { NotContradicted, Contradicted, Impossible, NotTested };
 
 struct GoodnessOfFit {
+    explicit GoodnessOfFit(Input asked) : input(std::move(asked)) {}
+
     Input input; ///< what was asked
     std::int64_t n = 0;
     std::vector<ClassResult> classes; ///< after joins
@@ -139,13 +143,16 @@ struct GoodnessOfFit {
     Message meaning;          ///< "If 9:3:3:1 is true, samples this far off or further occur in 50 of 100."
     std::vector<Message>
         cautions; ///< small expected counts, too close, joins after seeing, percentages, suspicious order
-    std::vector<std::vector<std::size_t>> proposed_joins; ///< for small classes; each adjacent pair of class indices
+    std::vector<std::vector<std::size_t>>
+        proposed_joins; ///< for small classes; each a join of input classes that are neighbours
     /// Mis-scoring rate that would make a forbidden class' offspring unsurprising at alpha; only when Impossible.
     std::optional<double> rescuing_error_rate;
 };
 
 /// Tests counts against a hypothesis. A pure function; errors are Input errors (lengths that differ, joins out of
-/// range or overlapping, alpha outside (0,1)).
+/// range or overlapping, alpha outside (0,1), fewer than two classes after joins, a method that is not available).
+/// Sources: Pearson 1900; Fisher 1922, 1924 (degrees of freedom, fitted parameters); Yates 1934; Williams 1976;
+/// Haberman 1973; Holm 1979; Wilson 1927; Clopper & Pearson 1934; Goodman 1965; Mather 1938; Cohen 1988; Cochran 1954.
 [[nodiscard]] Result<GoodnessOfFit> goodness_of_fit(const Input& input, const CancellationToken& cancel = {},
                                                     const Progress& progress = {});
 
