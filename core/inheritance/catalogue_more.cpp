@@ -1,0 +1,148 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#include <array>
+
+#include "core/inheritance/catalogue_sources.h"
+
+// Names of kinds of inheritance are common practice.
+namespace filial::inheritance {
+namespace {
+
+constexpr std::array<CatalogueSource, 10> kThreeLoci{{
+    {CatalogueGroup::ThreeLoci, "three loci, all dominant", "Aa Bb Cc x Aa Bb Cc",
+     "A_B_C_=1, A_B_cc=2, A_bbC_=3, aaB_C_=4, A_bbcc=5, aaB_cc=6, aabbC_=7, aabbcc=8",
+     "F2,trihybrid,independent assortment,three genes"},
+    {CatalogueGroup::ThreeLoci, "triplicate dominant genes", "Aa Bb Cc x Aa Bb Cc", "A_=1, B_=1, C_=1, aabbcc=2",
+     "F2,trihybrid,triplicate,epistasis"},
+    {CatalogueGroup::ThreeLoci, "one dominant gene, or two complementary ones", "Aa Bb Cc x Aa Bb Cc",
+     "A_=1, aaB_C_=1, aaB_cc=2, aabb=2", "F2,trihybrid,duplicate,complementary,epistasis"},
+    {CatalogueGroup::ThreeLoci, "triplicate recessive epistasis (three complementary genes)", "Aa Bb Cc x Aa Bb Cc",
+     "A_B_C_=1, aa=2, bb=2, cc=2", "F2,trihybrid,complementary,epistasis,37:27"},
+    {CatalogueGroup::ThreeLoci, "dominant at two or more of three loci", "Aa Bb Cc x Aa Bb Cc",
+     "A_B_=1, A_C_=1, B_C_=1, A_bbcc=2, aaB_cc=2, aabbC_=2, aabbcc=2", "F2,trihybrid,27:5,epistasis"},
+    {CatalogueGroup::ThreeLoci, "triplicate genes, one inhibited by the dominants of the others", "Aa Bb Cc x Aa Bb Cc",
+     "A_=1, B_=1, aabbcc=1, aabbC_=2", "F2,trihybrid,inhibitor,epistasis"},
+    {CatalogueGroup::ThreeLoci, "one gene complementary to either of two duplicate ones", "Aa Bb Cc x Aa Bb Cc",
+     "A_B_=1, A_C_=1, aa=2, A_bbcc=2", "F2,trihybrid,complementary,duplicate,epistasis"},
+    {CatalogueGroup::ThreeLoci, "dominant epistasis over two duplicate genes", "Aa Bb Cc x Aa Bb Cc",
+     "A_=1, aaB_=2, aaC_=2, aabbcc=3", "F2,trihybrid,masking,duplicate,epistasis"},
+    {CatalogueGroup::ThreeLoci, "two complementary genes and a modifier", "Aa Bb Cc x Aa Bb Cc",
+     "A_B_C_=1, A_B_cc=2, aa=3, bb=3", "F2,trihybrid,complementary,modifier,epistasis"},
+    {CatalogueGroup::ThreeLoci, "three loci, equal additive effects (number of dominant alleles)",
+     "Aa Bb Cc x Aa Bb Cc",
+     "AABBCC=1, AABBCc=2, AABbCC=2, AaBBCC=2, AABBcc=3, AABbCc=3, AAbbCC=3, AaBBCc=3, AaBbCC=3, aaBBCC=3, AABbcc=4, "
+     "AAbbCc=4, AaBBcc=4, AaBbCc=4, AabbCC=4, aaBBCc=4, aaBbCC=4, AAbbcc=5, AaBbcc=5, AabbCc=5, aaBBcc=5, aaBbCc=5, "
+     "aabbCC=5, Aabbcc=6, aaBbcc=6, aabbCc=6, aabbcc=7",
+     "F2,additive,polygenic,multiple factors,quantitative"},
+}};
+
+constexpr std::array<CatalogueSource, 44> kOther{{
+    {CatalogueGroup::TestCross, "two loci, test cross", "Aa Bb x aa bb", "AaBb=1, Aabb=2, aaBb=3, aabb=4",
+     "test cross,back-cross,BC1,dihybrid,independent assortment"},
+    {CatalogueGroup::TestCross, "complementary genes, test cross", "Aa Bb x aa bb", "A_B_=1, A_bb=2, aa=2",
+     "test cross,back-cross,9:7"},
+    {CatalogueGroup::TestCross, "duplicate genes, test cross", "Aa Bb x aa bb", "A_=1, B_=1, aabb=2",
+     "test cross,back-cross,15:1"},
+    {CatalogueGroup::TestCross, "recessive epistasis, test cross", "Aa Bb x aa bb", "A_B_=1, A_bb=2, aa=3",
+     "test cross,back-cross,9:3:4,9:4:3"},
+    {CatalogueGroup::TestCross, "dominant epistasis, test cross", "Aa Bb x aa bb", "A_=1, aaB_=2, aabb=3",
+     "test cross,back-cross,12:3:1"},
+    {CatalogueGroup::TestCross, "duplicate genes with cumulative effect, test cross", "Aa Bb x aa bb",
+     "A_B_=1, A_bb=2, aaB_=2, aabb=3", "test cross,back-cross,additive,9:6:1"},
+    {CatalogueGroup::TestCross, "three loci, test cross", "Aa Bb Cc x aa bb cc",
+     "A_B_C_=1, A_B_cc=2, A_bbC_=3, aaB_C_=4, A_bbcc=5, aaB_cc=6, aabbC_=7, aabbcc=8",
+     "test cross,trihybrid,independent assortment"},
+    {CatalogueGroup::TestCross, "three complementary genes, test cross", "Aa Bb Cc x aa bb cc",
+     "A_B_C_=1, aa=2, bb=2, cc=2", "test cross,back-cross,37:27"},
+    {CatalogueGroup::TestCross, "triplicate genes, test cross", "Aa Bb Cc x aa bb cc", "A_=1, B_=1, C_=1, aabbcc=2",
+     "test cross,back-cross,63:1"},
+    {CatalogueGroup::TestCross, "one codominant locus, back-cross to the dominant parent", "Aa x AA", "AA=1, Aa=2",
+     "back-cross,BC1,codominance,marker"},
+    {CatalogueGroup::TestCross, "two codominant loci, back-cross to the dominant parent", "Aa Bb x AA BB",
+     "AABB=1, AABb=2, AaBB=3, AaBb=4", "back-cross,BC1,codominance,markers"},
+    {CatalogueGroup::TestCross, "one locus segregating in both parents, one in one", "Aa Bb x Aa bb",
+     "A_B_=1, A_bb=2, aaB_=3, aabb=4", "half test cross,back-cross"},
+    {CatalogueGroup::TestCross, "complementary genes, one segregating in one parent only", "Aa Bb x Aa bb",
+     "A_B_=1, A_bb=2, aa=2", "half test cross,back-cross,9:7"},
+    {CatalogueGroup::TestCross, "duplicate genes, one segregating in one parent only", "Aa Bb x Aa bb",
+     "A_=1, B_=1, aabb=2", "half test cross,back-cross,15:1"},
+    {CatalogueGroup::TestCross, "one locus, second back-cross to the recessive parent", "Aa x aa x aa", "Aa=1, aa=2",
+     "back-cross,BC2"},
+    {CatalogueGroup::Selfing, "one locus, dominant, F3 in bulk", "Aa selfed 2", "A_=1, aa=2",
+     "F3,selfing,bulk,inbreeding,single-seed descent"},
+    {CatalogueGroup::Selfing, "one locus, dominant, F4 in bulk", "Aa selfed 3", "A_=1, aa=2",
+     "F4,selfing,bulk,inbreeding,single-seed descent"},
+    {CatalogueGroup::Selfing, "one locus, dominant, F5 in bulk", "Aa selfed 4", "A_=1, aa=2",
+     "F5,selfing,bulk,inbreeding,single-seed descent"},
+    {CatalogueGroup::Selfing, "one locus, heterozygote distinct, F3 in bulk", "Aa selfed 2", "AA=1, Aa=2, aa=3",
+     "F3,selfing,bulk,inbreeding,codominance,marker,single-seed descent"},
+    {CatalogueGroup::Selfing, "one locus, heterozygote distinct, F4 in bulk", "Aa selfed 3", "AA=1, Aa=2, aa=3",
+     "F4,selfing,bulk,inbreeding,codominance,marker,single-seed descent"},
+    {CatalogueGroup::Selfing, "one locus, heterozygote distinct, F5 in bulk", "Aa selfed 4", "AA=1, Aa=2, aa=3",
+     "F5,selfing,bulk,inbreeding,codominance,marker,single-seed descent"},
+    {CatalogueGroup::Selfing, "two loci, both dominant, F3 in bulk", "Aa Bb selfed 2", "A_B_=1, A_bb=2, aaB_=3, aabb=4",
+     "F3,selfing,bulk,dihybrid"},
+    {CatalogueGroup::Selfing, "back-cross to the recessive parent, then selfed", "Aa x aa selfed", "A_=1, aa=2",
+     "BC1F2,back-cross,selfing,bulk"},
+    {CatalogueGroup::Selfing, "back-cross to the dominant parent, then selfed", "Aa x AA selfed", "A_=1, aa=2",
+     "BC1F2,back-cross,selfing,bulk"},
+    {CatalogueGroup::Selfing, "kinds of F3 families, one locus (true-breeding dominant, segregating, recessive)",
+     "Aa selfed", "AA=1, Aa=2, aa=3", "F3 families,progeny test,line test"},
+    {CatalogueGroup::Selfing,
+     "kinds of F3 families of dominant F2 plants, complementary genes (true-breeding, 3:1, 9:7)", "Aa Bb selfed",
+     "AABB=1, AABb=2, AaBB=2, AaBb=3, A_bb=left out, aa=left out", "F3 families,progeny test,complementary,9:7"},
+    {CatalogueGroup::Selfing,
+     "kinds of F3 families, complementary genes (true-breeding dominant, segregating, recessive)", "Aa Bb selfed",
+     "AABB=1, AABb=2, AaBB=2, AaBb=2, aa=3, bb=3", "F3 families,progeny test,complementary,9:7"},
+    {CatalogueGroup::Selfing, "kinds of F3 families, duplicate genes (true-breeding dominant, segregating, recessive)",
+     "Aa Bb selfed", "AA=1, BB=1, AaBb=2, Aabb=2, aaBb=2, aabb=3", "F3 families,progeny test,duplicate,15:1"},
+    {CatalogueGroup::Selfing,
+     "kinds of F3 families of dominant F2 plants, triplicate genes (true-breeding, 3:1, 15:1, 63:1)", "Aa Bb Cc selfed",
+     "AA=1, BB=1, CC=1, Aabbcc=2, aaBbcc=2, aabbCc=2, AaBbcc=3, AabbCc=3, aaBbCc=3, AaBbCc=4, aabbcc=left out",
+     "F3 families,progeny test,triplicate,63:1"},
+    {CatalogueGroup::Lethal, "dominant gene lethal when homozygous", "Aa x Aa", "AA=dies, Aa=1, aa=2",
+     "lethal,recessive lethal,homozygote dies"},
+    {CatalogueGroup::Lethal, "recessives die, heterozygote distinct", "Aa x Aa", "aa=dies, AA=1, Aa=2",
+     "lethal,recessive lethal,true-breeding to segregating"},
+    {CatalogueGroup::Lethal, "two loci, dominant of the second lethal when homozygous", "Aa Bb x Aa Bb",
+     "BB=dies, A_Bb=1, A_bb=2, aaBb=3, aabb=4", "lethal,dihybrid,homozygote dies"},
+    {CatalogueGroup::Lethal, "two loci, dominant of the first lethal when homozygous", "Aa Bb x Aa Bb",
+     "AA=dies, AaB_=1, Aabb=2, aaB_=3, aabb=4", "lethal,dihybrid,homozygote dies"},
+    {CatalogueGroup::Lethal, "two loci, both dominants lethal when homozygous", "Aa Bb x Aa Bb",
+     "AA=dies, BB=dies, AaBb=1, Aabb=2, aaBb=3, aabb=4", "lethal,dihybrid,homozygote dies"},
+    {CatalogueGroup::SexLinked,
+     "sex-linked (male XY), recessive mother by dominant father: daughters dominant, sons recessive", "XaXa x XAY",
+     "XAXa=1, XaY=2", "XY,X-linked,criss-cross,reciprocal"},
+    {CatalogueGroup::SexLinked,
+     "sex-linked (male XY), dominant mother by recessive father: daughters and sons dominant", "XAXA x XaY",
+     "XAXa=1, XAY=2", "XY,X-linked,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (male XY), carrier mother by dominant father, sexes apart", "XAXa x XAY",
+     "XAX_=1, XAY=2, XaY=3", "XY,X-linked,F2,carrier,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (male XY), carrier mother by recessive father, sexes apart", "XAXa x XaY",
+     "XAXa=1, XaXa=2, XAY=3, XaY=4", "XY,X-linked,F2,criss-cross,carrier,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (male XY), carrier mother by dominant father, sexes together", "XAXa x XAY",
+     "XAX_=1, XAY=1, XaY=2", "XY,X-linked,F2,carrier"},
+    {CatalogueGroup::SexLinked,
+     "sex-linked (female ZW), dominant mother by recessive father: sons dominant, daughters recessive", "ZAW x ZaZa",
+     "ZAZa=1, ZaW=2", "ZW,Z-linked,criss-cross,reciprocal,sexing"},
+    {CatalogueGroup::SexLinked,
+     "sex-linked (female ZW), recessive mother by dominant father: sons and daughters dominant", "ZaW x ZAZA",
+     "ZAZa=1, ZAW=2", "ZW,Z-linked,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (female ZW), dominant mother by carrier father, sexes apart", "ZAW x ZAZa",
+     "ZAZ_=1, ZAW=2, ZaW=3", "ZW,Z-linked,F2,carrier,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (female ZW), recessive mother by carrier father, sexes apart", "ZaW x ZAZa",
+     "ZAZa=1, ZaZa=2, ZAW=3, ZaW=4", "ZW,Z-linked,F2,criss-cross,carrier,reciprocal"},
+    {CatalogueGroup::SexLinked, "sex-linked (female ZW), dominant mother by carrier father, sexes together",
+     "ZAW x ZAZa", "ZAZ_=1, ZAW=1, ZaW=2", "ZW,Z-linked,F2,carrier"},
+}};
+
+} // namespace
+
+std::span<const CatalogueSource> three_locus_sources() {
+    return kThreeLoci;
+}
+
+std::span<const CatalogueSource> other_sources() {
+    return kOther;
+}
+
+} // namespace filial::inheritance
