@@ -39,7 +39,7 @@ public:
     [[nodiscard]] bool can_redo() const;
     [[nodiscard]] std::optional<Message> undo_text() const;
     [[nodiscard]] std::optional<Message> redo_text() const;
-    /// Replays an entry read from a journal.
+    /// Replays an entry read from a journal; numbered anew. An entry that does not fit is an error and changes nothing.
     Done replay(const LogEntry& entry);
 
     [[nodiscard]] const std::vector<LogEntry>& history() const { return history_; }
@@ -52,7 +52,14 @@ public:
 private:
     struct Step {
         std::vector<std::size_t> entries;
-    }; // indices into history_, of Do entries
+    };                           // indices into history_; their edits in order are the step
+    void record(LogEntry entry); // numbers it, moves the stacks, tells the listener
+    [[nodiscard]] bool joins_last(const std::string& merge_key) const;
+    void note_do(std::size_t index, bool joins);
+    void note_undo(std::size_t index);
+    void note_redo(std::size_t index);
+    [[nodiscard]] Edit edit_of(const Step& step) const;
+
     Book book_;
     std::vector<LogEntry> history_;
     std::vector<Step> done_, undone_;

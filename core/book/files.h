@@ -4,6 +4,7 @@
 #include <memory>
 #include <string>
 #include <string_view>
+#include <vector>
 
 #include "core/numeric/result.h"
 
@@ -25,13 +26,19 @@ public:
     virtual ~Files() = default;
     virtual Result<std::string> read(const std::string& path, std::size_t at_most) = 0;
     virtual bool exists(const std::string& path) = 0;
-    /// New file beside `path`, written, synced, renamed over it, folder synced.
+    /// New file beside `path`, written, synced, renamed over it, folder synced. Keeps the permission bits of a file
+    /// that was there, and follows a symbolic link to it. On an error the old file is as it was.
     virtual Done write_atomically(const std::string& path, std::string_view bytes) = 0;
     virtual Result<std::unique_ptr<AppendFile>> open_append(const std::string& path) = 0;
     virtual Done remove(const std::string& path) = 0;
-    /// Takes the lock of a book; an error says who holds it. Released when the object goes.
+    /// Takes the lock of a book, a file beside it; an error BookOpenElsewhere says who holds it. Released when the
+    /// object goes, or the process.
     virtual Result<std::shared_ptr<void>> lock(const std::string& path) = 0;
     virtual bool folder_writable(const std::string& folder) = 0;
+    /// Names of the files in a folder, sorted; none where it cannot be read.
+    virtual std::vector<std::string> list(const std::string& folder) = 0;
+    /// Makes a folder and those above it; done where it is there already.
+    virtual Done make_folder(const std::string& folder) = 0;
 };
 
 /// The real disk (POSIX).

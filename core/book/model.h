@@ -81,10 +81,10 @@ struct Family {
     friend bool operator==(const Family&, const Family&) = default;
 
     /// What stands in the table: the typed cell and the plants of that class together. With ordered plants
-    /// a blank typed cell reads as a number.
+    /// a blank typed cell reads as a number; one typed as not looked stays so.
     [[nodiscard]] Cell cell(ClassIndex phenotype) const;
-    [[nodiscard]] bool complete(std::size_t class_count) const;                            ///< no blank, no not-looked
-    [[nodiscard]] bool blank(std::size_t class_count) const;                               ///< nothing entered at all
+    [[nodiscard]] bool complete(std::size_t class_count) const; ///< no blank, no not-looked
+    [[nodiscard]] bool blank(std::size_t class_count) const;    ///< no number, no not-looked, no plant, no not-scored
     [[nodiscard]] std::optional<std::vector<Count>> counts(std::size_t class_count) const; ///< only where complete
     [[nodiscard]] Cell not_scored_cell() const; ///< typed and plants together
 };
