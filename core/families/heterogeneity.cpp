@@ -201,7 +201,7 @@ void extra_variation(const Input& input, const CountTable& table, const Shares& 
     extra.rho_high = rho_reason;
     extra.lr = rho_reason;
     extra.p = rho_reason;
-    if (!input.common.hypothesis.free_parameters().empty()) {
+    if (input.common.fitted_elsewhere > 0 || !input.common.hypothesis.free_parameters().empty()) {
         extra.z = say(MessageId::FamiliesScoreTestFitted);
     } else if (const auto z = score_z(table, shares)) {
         extra.z = *z;
@@ -302,8 +302,8 @@ void say_cautions(const Input& input, const CountTable& table, const Shares& sha
         if (table.totals()[i] == 0 && shares.p[i] > 0.0)
             result.cautions.push_back(
                 say(MessageId::FamiliesEmptyClass, {text_argument(result.pooled_fit.classes[i].label)}));
-    for (const inheritance::FreeParameter& parameter : input.common.hypothesis.free_parameters())
-        result.cautions.push_back(say(MessageId::FamiliesFittedTogether, {text_argument(parameter.name)}));
+    for (const fit::Estimate& estimate : result.pooled_fit.estimates)
+        result.cautions.push_back(say(MessageId::FamiliesFittedTogether, {text_argument(estimate.name)}));
 }
 
 Result<std::vector<fit::GoodnessOfFit>> family_fits(const Input& input, const CancellationToken& cancel,

@@ -41,6 +41,13 @@ FamilyState state_of(const book::Family& family, std::size_t classes, const std:
     return family.blank(classes) ? FamilyState::Blank : FamilyState::Incomplete;
 }
 
+// The fit cannot know of a tally, of a hint dismissed, or that a total of several families is near 100 by chance.
+void set_percentages_caution(fit::GoodnessOfFit& fit, bool caution) {
+    std::erase_if(fit.cautions, [](const Message& one) { return one.id == MessageId::FitLooksLikePercentages; });
+    if (caution)
+        fit.cautions.push_back({MessageId::FitLooksLikePercentages, {}});
+}
+
 bool same_question(const fit::Input& a, const fit::Input& b) {
     return a.observed == b.observed && a.alpha == b.alpha && a.method == b.method && a.order == b.order &&
            a.replicates == b.replicates && a.seed == b.seed && a.joins == b.joins &&
@@ -138,7 +145,7 @@ void Analysis::read_families() {
         if (counts.has_value()) {
             one.total = sum_of(*counts);
             if (look_like_percentages(family, *counts))
-                one.hints.push_back({MessageId::HintPercentages, {}});
+                one.hints.push_back({MessageId::FitLooksLikePercentages, {}});
         }
         for (Message& hint : stage_hints(family, classes_))
             one.hints.push_back(std::move(hint));
@@ -205,15 +212,19 @@ void Analysis::test_families() {
             return;
         }
         question_->observed = *counts_[j];
+        FamilyAnalysis& family = result_.families[j];
         if (const fit::GoodnessOfFit* known = known_fit(j, *question_)) {
-            result_.families[j].fit = *known;
-            continue;
-        }
-        auto fit = fit::goodness_of_fit(*question_, cancel_);
-        if (fit)
-            result_.families[j].fit = std::move(fit).value();
-        else
+            family.fit = *known;
+        } else if (auto fit = fit::goodness_of_fit(*question_, cancel_)) {
+            family.fit = std::move(fit).value();
+        } else {
             result_.error = fit.error();
+            return;
+        }
+        const bool percentages = std::any_of(family.hints.begin(), family.hints.end(), [](const Message& hint) {
+            return hint.id == MessageId::FitLooksLikePercentages;
+        });
+        set_percentages_caution(*family.fit, percentages);
     }
 }
 
@@ -247,6 +258,7 @@ void Analysis::test_together(const std::vector<std::size_t>& families, std::opti
         return;
     }
     heterogeneity = std::move(together).value();
+    set_percentages_caution(heterogeneity->pooled_fit, false);
     totals = heterogeneity->pooled_fit;
 }
 

@@ -5,6 +5,8 @@
 #include <array>
 #include <utility>
 
+#include "core/fit/verdict.h"
+
 namespace filial::report {
 namespace {
 
@@ -59,16 +61,6 @@ Message stages_sentence(const SownToScored& s) {
                counts);
 }
 
-double deciding_p(const fit::GoodnessOfFit& fit) {
-    if (fit.exact)
-        return fit.exact->p.p;
-    if (fit.simulated)
-        return fit.simulated->p;
-    if (fit.chi_square && fit.chi_square->p)
-        return fit.chi_square->p->p;
-    return fit.verdict == fit::Verdict::Impossible ? 0.0 : 1.0;
-}
-
 bool rejects(fit::Verdict verdict) {
     return verdict == fit::Verdict::Contradicted || verdict == fit::Verdict::Impossible;
 }
@@ -84,7 +76,8 @@ void bounds(const fit::GoodnessOfFit& totals, const CancellationToken& cancel, S
             continue;
         SownToScored::IfAllLost bound;
         bound.class_index = i;
-        bound.p = deciding_p(fit.value());
+        const auto p = fit::deciding_p(fit.value());
+        bound.p = p.has_value() ? p->p : 1.0;
         bound.verdict_changes = rejects(fit.value().verdict) != rejects(totals.verdict);
         bound.share = then.observed[i].as_double() / static_cast<double>(result.scored + result.lost);
         result.if_all_lost.push_back(bound);
@@ -99,19 +92,26 @@ void say_bounds(const fit::GoodnessOfFit& totals, SownToScored& result) {
     const auto pick = [&](MessageId seed, MessageId plant, MessageId unscored) {
         return seeds ? seed : plants ? plant : unscored;
     };
-    bool stands = true;
-    for (const auto& bound : result.if_all_lost) {
-        if (!bound.verdict_changes)
-            continue;
-        stands = false;
-        result.sentences.push_back(
-            {pick(MessageId::LostSeedWouldChange, MessageId::LostPlantWouldChange, MessageId::LostUnscoredWouldChange),
-             {text_argument(totals.input.labels[bound.class_index])}});
-    }
-    if (stands)
+    const auto& bounds_of = result.if_all_lost;
+    const auto changes = [](const SownToScored::IfAllLost& bound) { return bound.verdict_changes; };
+    const auto changing = std::count_if(bounds_of.begin(), bounds_of.end(), changes);
+    if (changing == 0) {
         result.sentences.push_back({pick(MessageId::LostSeedWouldNotChange, MessageId::LostPlantWouldNotChange,
                                          MessageId::LostUnscoredWouldNotChange),
                                     {}});
+        return;
+    }
+    if (static_cast<std::size_t>(changing) == bounds_of.size()) {
+        result.sentences.push_back({pick(MessageId::LostSeedAnyWouldChange, MessageId::LostPlantAnyWouldChange,
+                                         MessageId::LostUnscoredAnyWouldChange),
+                                    {}});
+        return;
+    }
+    for (const auto& bound : bounds_of)
+        if (bound.verdict_changes)
+            result.sentences.push_back({pick(MessageId::LostSeedWouldChange, MessageId::LostPlantWouldChange,
+                                             MessageId::LostUnscoredWouldChange),
+                                        {text_argument(totals.input.labels[bound.class_index])}});
 }
 
 } // namespace
