@@ -69,9 +69,23 @@ std::optional<Generation<Scalar>> run(const CrossPlan& plan, const Grouping& gro
     return without(plants, grouping.left_out, plan.loci.size());
 }
 
+/// Locus by locus: AABB, AABb, AAbb, AaBB, …; phases of one genotype side by side.
+struct ByLocus {
+    bool operator()(const Genotype& left, const Genotype& right) const {
+        for (std::size_t i = 0; i < kMostLoci; ++i) {
+            const auto one = std::minmax(left.first.alleles[i], left.second.alleles[i]);
+            const auto other = std::minmax(right.first.alleles[i], right.second.alleles[i]);
+            if (one != other)
+                return one < other;
+        }
+        return left < right;
+    }
+};
+template <class Scalar> using Table = std::map<Genotype, Scalar, ByLocus>;
+
 /// Genotypes in the order of the table. Without linkage the phase does not matter and phases are added together.
-template <class Scalar> Generation<Scalar> table_of(const Generation<Scalar>& plants, bool phased) {
-    Generation<Scalar> table;
+template <class Scalar> Table<Scalar> table_of(const Generation<Scalar>& plants, bool phased) {
+    Table<Scalar> table;
     for (const auto& [genotype, share] : plants) {
         if (share == Scalar(0))
             continue;
@@ -136,7 +150,7 @@ Done check_kept_back(const CrossPlan& plan, const Grouping& grouping) {
     return done();
 }
 
-template <class Scalar> void keep_what_arises(Grouping& grouping, const Generation<Scalar>& table, std::size_t loci) {
+template <class Scalar> void keep_what_arises(Grouping& grouping, const Table<Scalar>& table, std::size_t loci) {
     std::erase_if(grouping.classes, [&](const GroupedClass& named) {
         return std::none_of(table.begin(), table.end(),
                             [&](const auto& entry) { return any_takes_in(named.patterns, entry.first, loci); });
@@ -144,7 +158,7 @@ template <class Scalar> void keep_what_arises(Grouping& grouping, const Generati
 }
 
 template <class Scalar> struct Shares {
-    Generation<Scalar> table;
+    Table<Scalar> table;
     std::vector<std::size_t> class_of_row;
     std::vector<Scalar> classes;
 };
@@ -171,7 +185,7 @@ Result<Shares<Scalar>> shares_of(const CrossPlan& plan, Grouping& grouping, bool
 /// Fractions over one common denominator: "4/16", not "1/4".
 struct CommonDenominator {
     Whole denominator = 1;
-    explicit CommonDenominator(const Generation<Exact>& table) {
+    explicit CommonDenominator(const Table<Exact>& table) {
         for (const auto& entry : table)
             denominator = boost::multiprecision::lcm(denominator, boost::multiprecision::denominator(entry.second));
     }
