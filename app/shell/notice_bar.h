@@ -1,0 +1,31 @@
+// SPDX-License-Identifier: GPL-3.0-or-later
+#pragma once
+
+#include <QFrame>
+
+class QLabel;
+class QPushButton;
+class QToolButton;
+
+namespace filial::app {
+
+/// A calm line under the top bar: what went wrong or what should be known, with its reason. It never stops the work
+/// and goes when dismissed.
+class NoticeBar : public QFrame {
+    Q_OBJECT
+public:
+    enum class Kind { Note, Warning, Error };
+    explicit NoticeBar(QWidget* parent = nullptr);
+    void show(Kind kind, const QString& sentence);
+    QString sentence() const;
+
+protected:
+    void paintEvent(QPaintEvent* event) override;
+
+private:
+    QLabel* glyph_;
+    QLabel* text_;
+    QPushButton* dismiss_;
+};
+
+} // namespace filial::app
