@@ -34,6 +34,10 @@ void HouseStyle::polish(QWidget* widget) {
     if (qobject_cast<QAbstractButton*>(widget) != nullptr || qobject_cast<QComboBox*>(widget) != nullptr ||
         qobject_cast<QTabBar*>(widget) != nullptr || qobject_cast<QLineEdit*>(widget) != nullptr)
         widget->setAttribute(Qt::WA_Hover);
+    if (auto* field = qobject_cast<QLineEdit*>(widget); field != nullptr && field->hasFrame() &&
+                                                        field->textMargins().isNull() &&
+                                                        !field->property(look::kBare).toBool())
+        field->setTextMargins(6, 0, 6, 0);
 }
 
 void HouseStyle::drawPrimitive(PrimitiveElement element, const QStyleOption* option, QPainter* painter,

@@ -25,6 +25,8 @@ void ClassPreview::setCross(book::Cross cross) {
     for (std::size_t i = 0; i < cross_.classes.size(); ++i)
         spoken << QString::fromStdString(cross_.class_label(ClassIndex(i)));
     setAccessibleName(tr("Classes: %1").arg(spoken.join(QStringLiteral(", "))));
+    // A scroll area asks for no height for width: the room is kept as a minimum.
+    setMinimumHeight(heightForWidth(std::max(width(), 2 * kCell)));
     updateGeometry();
     update();
 }

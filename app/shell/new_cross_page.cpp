@@ -41,6 +41,7 @@ QLineEdit* lineEdit(const QString& name, const QString& example) {
     auto* edit = new QLineEdit;
     edit->setAccessibleName(name);
     edit->setPlaceholderText(example);
+    edit->setMinimumHeight(32);
     return edit;
 }
 
