@@ -1,5 +1,6 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 // Random tables against R, SciPy and brute force in mpmath; statistic and P are checked apart.
+#include <algorithm>
 #include <cmath>
 #include <cstdlib>
 #include <random>
@@ -12,10 +13,16 @@
 namespace filial::test {
 namespace {
 
+constexpr int kTables = 10'000;
+
 // Below the normal doubles std::stod throws; such a P is compared to 1e-300.
 double number(const std::string& text) {
     return std::strtod(text.c_str(), nullptr);
 }
+
+struct Table {
+    std::vector<long> counts, weights;
+};
 
 std::string joined(const std::vector<long>& values) {
     std::string text;
@@ -24,9 +31,65 @@ std::string joined(const std::vector<long>& values) {
     return text;
 }
 
+// Multinomial samples near their ratio, some disturbed, so that P runs from 1 to the deep tail.
+std::vector<Table> random_tables() {
+    std::mt19937_64 random(20260301);
+    std::vector<Table> tables(kTables);
+    for (Table& table : tables) {
+        const auto classes = std::uniform_int_distribution<int>(2, 9)(random);
+        const double size = std::exp(std::uniform_real_distribution<double>(2.0, 12.0)(random));
+        long sum = 0;
+        for (int i = 0; i < classes; ++i) {
+            table.weights.push_back(std::uniform_int_distribution<long>(1, 30)(random));
+            sum += table.weights.back();
+        }
+        const double disturbance = std::uniform_real_distribution<double>(0.0, 0.3)(random);
+        for (const long weight : table.weights) {
+            const double mean = size * static_cast<double>(weight) / static_cast<double>(sum) *
+                                std::exp(std::normal_distribution<double>(0.0, disturbance)(random));
+            table.counts.push_back(std::poisson_distribution<long>(mean)(random));
+        }
+        table.counts.front() += 1; // never all zero
+    }
+    return tables;
+}
+
 void expect_relative(double found, double expected, double tolerance, const std::string& what) {
     EXPECT_LE(std::abs(found - expected), tolerance * std::abs(expected) + 1e-300)
         << what << ": " << exact_text(found) << " and " << exact_text(expected);
+}
+
+TEST(FitOracle, TenThousandTablesInRAndSciPy) {
+    const std::vector<Table> tables = random_tables();
+    std::vector<fit::GoodnessOfFit> results;
+    std::vector<Row> for_r;
+    std::vector<Row> for_scipy;
+    for (std::size_t i = 0; i < tables.size(); ++i) {
+        results.push_back(fitted(tables[i].counts, notation(tables[i].weights)));
+        const std::string chi2 = exact_text(results[i].chi_square->statistic);
+        Row row{std::to_string(i), joined(tables[i].counts), joined(tables[i].weights), chi2};
+        for_r.push_back(row);
+        row.push_back(exact_text(results[i].g->statistic));
+        for_scipy.push_back(row);
+    }
+    const auto r = run_oracle("fit_tables.R", for_r);
+    const auto scipy = run_oracle("fit_tables.py", for_scipy);
+    ASSERT_EQ(r.size(), tables.size());
+    ASSERT_EQ(scipy.size(), tables.size());
+    for (std::size_t i = 0; i < tables.size(); ++i) {
+        const fit::GoodnessOfFit& found = results[i];
+        const Row& in_r = r.at(std::to_string(i));
+        const Row& in_scipy = scipy.at(std::to_string(i));
+        // The references subtract rounded numbers: their own error is up to N eps in O - E, 2 sqrt(N X2) eps in X2.
+        const auto n = static_cast<double>(found.n);
+        const double x2 = found.chi_square->statistic;
+        EXPECT_NEAR(x2, number(in_r[1]), 1e-13 * (x2 + std::sqrt(n * x2)) + 1e-18 * n);
+        EXPECT_NEAR(x2, number(in_scipy[1]), 1e-13 * (x2 + std::sqrt(n * x2)) + 1e-18 * n);
+        EXPECT_NEAR(found.g->statistic, number(in_scipy[2]), 1e-14 * n + 1e-13 * found.g->statistic);
+        expect_relative(found.chi_square->p->p, number(in_r[2]), 1e-12 * std::max(1.0, x2 / 2.0), "P of X2 in R");
+        expect_relative(found.chi_square->p->p, number(in_scipy[3]), 1e-12 * std::max(1.0, x2 / 2.0), "P of X2");
+        expect_relative(found.g->p->p, number(in_scipy[4]), 1e-12 * std::max(1.0, found.g->statistic / 2.0), "P of G");
+    }
 }
 
 struct Pair {
