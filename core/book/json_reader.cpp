@@ -73,7 +73,8 @@ const Json* Fields::find(std::string_view name) {
     const auto found = json_->find(name);
     if (found == json_->end())
         return nullptr;
-    asked_.push_back(name);
+    if (std::find(asked_.begin(), asked_.end(), name) == asked_.end())
+        asked_.push_back(name);
     return &*found;
 }
 

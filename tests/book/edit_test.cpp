@@ -164,6 +164,9 @@ TEST(Edit, UnknownKindsAndFieldsAreErrors) {
     EXPECT_FALSE(read_edit(R"({"edit":"move_cross","from":0,"to":1,"how":"fast"})"));
     EXPECT_FALSE(read_edit("[]"));
     EXPECT_TRUE(read_edit(R"({"edit":"move_cross","from":0,"to":1})"));
+    const std::string cell = R"({"edit":"set_cell","cross":"c","family":"f","class":0,"before":null,"after":3)";
+    EXPECT_TRUE(read_edit(cell + "}"));
+    EXPECT_FALSE(read_edit(cell + R"(,"more":1})"));
 }
 
 } // namespace
