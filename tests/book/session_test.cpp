@@ -202,6 +202,7 @@ TEST(Session, ACrashBetweenSavingAndEmptyingTheJournalDoesNothingTwice) {
     session = opened(scratch);
     EXPECT_EQ(counted(session->book()), 6);
     EXPECT_EQ(session->recovered_entries(), 0U);
+    EXPECT_TRUE(session->warnings().empty());
     ASSERT_TRUE(count_on(*session));
     session->wait_until_synced();
     session.reset();
