@@ -1,11 +1,12 @@
 # SPDX-License-Identifier: GPL-3.0-or-later
 """P if every lost plant were of one class. One line a case: id, lost, classes, the weights, the counts.
 
-SciPy's chi-square for three or more classes, its exact binomial test for two.
+SciPy's chi-square for three or more classes; for two its binomial probabilities added over every outcome at least as far
+from the expected number, which is the order of chi-square.
 """
 import sys
 
-from scipy.stats import binomtest, chisquare
+from scipy.stats import binom, chisquare
 
 print("id,now,then")
 for line in sys.stdin:
@@ -15,7 +16,10 @@ for line in sys.stdin:
 
     def p(row):
         if k == 2:
-            return binomtest(row[0], sum(row), weights[0] / sum(weights)).pvalue
+            n, whole = sum(row), sum(weights)
+            far = abs(row[0] * whole - n * weights[0])
+            return sum(binom.pmf(o, n, weights[0] / whole)
+                       for o in range(n + 1) if abs(o * whole - n * weights[0]) >= far)
         return chisquare(row, [sum(row) * w / sum(weights) for w in weights]).pvalue
 
     then = [p([o + (lost if i == j else 0) for j, o in enumerate(counts)]) for i in range(k)]
