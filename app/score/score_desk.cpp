@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/score/score_desk.h"
 
+#include <QAction>
+
 #include "app/common/text.h"
 #include "app/score/meaning_column.h"
 #include "app/score/score_pane.h"
@@ -8,8 +10,28 @@
 namespace filial::app {
 
 ScoreDesk::ScoreDesk(Workbook* workbook, QObject* parent)
-    : Desk(parent), workbook_(workbook), pane_(new ScorePane(workbook)), meaning_(new MeaningColumn(workbook)) {
-    connect(workbook_, &Workbook::analysisChanged, this, &Desk::verdictLineChanged);
+    : Desk(parent), workbook_(workbook), view_(new ScoreView(workbook, this)), pane_(new ScorePane(view_)),
+      meaning_(new MeaningColumn(view_)) {
+    connect(view_, &ScoreView::changed, this, &Desk::verdictLineChanged);
+    connect(meaning_, &MeaningColumn::joinRequested, pane_, &ScorePane::joinClasses);
+    addActions();
+}
+
+void ScoreDesk::addActions() {
+    auto* choose = new QAction(tr("Choose hypothesis…"), this);
+    choose->setObjectName("choose-hypothesis");
+    choose->setShortcut(QKeySequence(Qt::CTRL | Qt::Key_R));
+    connect(choose, &QAction::triggered, pane_, &ScorePane::chooseHypothesis);
+    auto* twin = new QAction(tr("Show as table"), this);
+    twin->setObjectName("show-as-table-action");
+    twin->setShortcut(QKeySequence(Qt::CTRL | Qt::SHIFT | Qt::Key_T));
+    connect(twin, &QAction::triggered, pane_, &ScorePane::showAsTable);
+    for (QAction* action : {choose, twin}) {
+        action->setShortcutContext(Qt::WindowShortcut);
+        pane_->addAction(action);
+    }
+    actions_ = {choose, twin};
+    actions_ += pane_->table()->tableActions();
 }
 
 ScoreDesk::~ScoreDesk() {
@@ -33,7 +55,7 @@ QWidget* ScoreDesk::right() {
 }
 
 QString ScoreDesk::verdictLine() const {
-    const report::CrossAnalysis& analysis = workbook_->analysis();
+    const report::CrossAnalysis& analysis = view_->analysis();
     if (analysis.hypothesis_error)
         return say(analysis.hypothesis_error->message);
     return analysis.totals ? say(analysis.totals->verdict_sentence) : QString();
@@ -44,7 +66,7 @@ QList<QAction*> ScoreDesk::actions() const {
 }
 
 QString ScoreDesk::copyTable() const {
-    return {};
+    return pane_ ? pane_->table()->wholeTable() : QString();
 }
 
 } // namespace filial::app

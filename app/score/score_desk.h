@@ -10,6 +10,7 @@
 namespace filial::app {
 
 class ScorePane;
+class ScoreView;
 class MeaningColumn;
 
 class ScoreDesk : public Desk {
@@ -26,7 +27,10 @@ public:
     QString copyTable() const override;
 
 private:
+    void addActions();
+
     Workbook* workbook_;
+    ScoreView* view_;
     QPointer<ScorePane> pane_; ///< the window that embeds the panes owns them from then on
     QPointer<MeaningColumn> meaning_;
     QList<QAction*> actions_;
