@@ -99,6 +99,9 @@ Document derivation_document(const inheritance::DeriveInput& input, const inheri
              derivation.ratio ? say(MessageId::ReportDerivedRatio, {ratio_argument(derivation.ratio->notation())})
                               : say(MessageId::ReportNoExactRatio),
              Paragraph::Role::Verdict);
+    for (const Message& note : derivation.notes) {
+        add_text(document, render(note));
+    }
     add_heading(document, 2, say(MessageId::ReportPhenotypes));
     document.blocks.emplace_back(class_table(derivation));
     add_heading(document, 2, say(MessageId::ReportGenotypes));
