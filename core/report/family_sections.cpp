@@ -30,7 +30,7 @@ bool exact_p_anywhere(const CrossAnalysis& analysis) {
 /// χ², df, P and, where the table has it, the exact P.
 void append_fit(std::vector<std::string>& cells, const std::optional<fit::GoodnessOfFit>& fit, bool with_exact) {
     const bool tested = fit && fit->chi_square;
-    cells.push_back(tested ? statistic_text(fit->chi_square->statistic) : "–");
+    cells.push_back(tested ? shown_statistic(fit->chi_square->statistic) : "–");
     cells.push_back(fit && fit->n > 0 ? shown_count(fit->df) : "–");
     if (fit && fit->verdict == fit::Verdict::Impossible) {
         cells.emplace_back("0");
@@ -38,7 +38,7 @@ void append_fit(std::vector<std::string>& cells, const std::optional<fit::Goodne
         cells.push_back(tested ? shown_p(fit->chi_square->p) : "–");
     }
     if (with_exact) {
-        cells.push_back(fit && fit->exact ? p_text(fit->exact->p.p) : "–");
+        cells.push_back(fit && fit->exact ? shown_p(fit->exact->p) : "–");
     }
 }
 

@@ -43,8 +43,10 @@ void add_exact_rows(Table& table, const GoodnessOfFit& result) {
         const bool bounded = result.exact->method == "bounded";
         add_test_row(table, bounded ? MessageId::ReportBounded : MessageId::ReportExact, Maybe<double>{}, "–",
                      result.exact->p);
-        table.rows.push_back(
-            {{say(MessageId::ReportMidP), "–", "–", p_text(result.exact->mid_p)}, TableRow::Role::Sub});
+        if (result.verdict != fit::Verdict::Impossible) {
+            table.rows.push_back(
+                {{say(MessageId::ReportMidP), "–", "–", p_text(result.exact->mid_p)}, TableRow::Role::Sub});
+        }
     } else {
         note_reason(table, MessageId::ReportExact, result.exact.why_not);
     }
@@ -86,9 +88,6 @@ void add_verdict(Document& document, const GoodnessOfFit& result) {
     }
     for (const Message& caution : result.cautions) {
         add_text(document, render(caution), Paragraph::Role::Caution);
-    }
-    if (result.rescuing_error_rate) {
-        add_text(document, say(MessageId::ReportRescue, {percent_argument(*result.rescuing_error_rate, 2)}));
     }
 }
 

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/report/sections.h"
 
+#include <cmath>
+
 #include "core/report/wording.h"
 
 namespace filial::report {
@@ -31,11 +33,15 @@ void add_facts(Document& document, const std::vector<std::pair<std::string, std:
 }
 
 std::string shown_p(const Maybe<fit::Tail>& p) {
-    return p ? p_text(p->p) : "–";
+    if (!p) {
+        return "–";
+    }
+    const bool impossible = p->p == 0.0 && std::isinf(p->log10_p);
+    return impossible ? "0" : p_text(p->p);
 }
 
 std::string shown_statistic(const Maybe<double>& value) {
-    return value ? statistic_text(*value) : "–";
+    return value && std::isfinite(*value) ? statistic_text(*value) : "–";
 }
 
 std::string shown_count(std::int64_t count) {

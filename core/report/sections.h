@@ -19,7 +19,7 @@ void add_text(Document& document, std::string text, Paragraph::Role role = Parag
 /// A table of two columns without titles; rows without a value are left out.
 void add_facts(Document& document, const std::vector<std::pair<std::string, std::string>>& facts);
 
-/// "–" where there is no value.
+/// "–" where there is no value; a P that is exactly 0 (an impossible hypothesis) is "0", and has no finite statistic.
 [[nodiscard]] std::string shown_p(const Maybe<fit::Tail>& p);
 [[nodiscard]] std::string shown_statistic(const Maybe<double>& value);
 [[nodiscard]] std::string shown_count(std::int64_t count);

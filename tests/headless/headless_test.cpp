@@ -18,7 +18,7 @@ namespace {
 
 using nlohmann::json;
 
-struct Run {
+struct Outcome {
     int status = -1;
     std::string out, err;
 };
@@ -41,14 +41,14 @@ protected:
     void TearDown() override { std::filesystem::remove_all(folder_); }
 
     /// `arguments` are as a shell reads them.
-    Run run(const std::string& arguments) const {
+    Outcome run(const std::string& arguments) const {
         const std::string command = "cd '" + folder_ + "' && env -u DISPLAY -u WAYLAND_DISPLAY -u QT_QPA_PLATFORM '" +
                                     FILIAL_EXECUTABLE + "' " + arguments + " >out.txt 2>err.txt </dev/null";
         const int status = std::system(command.c_str());
         return {WIFEXITED(status) ? WEXITSTATUS(status) : -1, slurp(folder_ + "/out.txt"), slurp(folder_ + "/err.txt")};
     }
     json run_json(const std::string& arguments) const {
-        const Run answer = run(arguments + " --json");
+        const Outcome answer = run(arguments + " --json");
         EXPECT_EQ(answer.status, 0) << answer.err;
         return json::parse(answer.out, nullptr, false);
     }
@@ -56,7 +56,7 @@ protected:
     /// Refused: this status, nothing on standard output, one line naming the place and what is wrong.
     void expect_refused(const std::string& arguments, int status, const std::string& place) const {
         SCOPED_TRACE("filial " + arguments);
-        const Run answer = run(arguments);
+        const Outcome answer = run(arguments);
         EXPECT_EQ(answer.status, status);
         EXPECT_EQ(answer.out, "");
         EXPECT_NE(answer.err.find(place), std::string::npos) << answer.err;
@@ -72,7 +72,7 @@ TEST_F(Headless, TenPlantsOfMendelGiveThePublishedHeterogeneity) {
     const json reference = test::reference_case("E01");
     std::string table = "family,round,angular\n";
     for (const json& family : reference["inputs"]["families"]) {
-        table += "plant," + family[0].dump() + "," + family[1].dump() + "\n";
+        table += "plant " + std::to_string(table.size()) + "," + family[0].dump() + "," + family[1].dump() + "\n";
     }
     write("plants.csv", table);
     const json expected = reference["expected"];
@@ -154,7 +154,7 @@ TEST_F(Headless, WrongArgumentsAreRefusedByPlace) {
     expect_refused("--frobnicate", 2, "--frobnicate");
     expect_refused("derive", 2, "derive");
     expect_refused("derive 'Aa x Aa' --linkage 0.6", 2, "--linkage");
-    expect_refused("derive 'Aa x'", 2, "derive");
+    expect_refused("derive 'Aa x'", 2, "character 5");
 }
 
 TEST_F(Headless, WrongFilesAreRefusedByPlaceAndStatus) {
@@ -188,7 +188,7 @@ TEST_F(Headless, ReportIsAWellFormedPageWithEverySection) {
     const std::string book = std::string(FILIAL_SAMPLES) + "/f2-one-odd-family.filial";
     ASSERT_TRUE(std::filesystem::exists(book)) << book;
     const std::string before = slurp(book);
-    const Run answer = run("report '" + book + "' --out report.html");
+    const Outcome answer = run("report '" + book + "' --out report.html");
     ASSERT_EQ(answer.status, 0) << answer.err;
     EXPECT_EQ(slurp(book), before) << "no verb changes its input";
     const std::string check =
@@ -205,7 +205,7 @@ TEST_F(Headless, ReportIsAWellFormedPageWithEverySection) {
 
 TEST_F(Headless, HelpAndVersionAnswerWithoutADisplay) {
     for (const char* verb : {"", "score ", "families ", "derive ", "report "}) {
-        const Run answer = run(std::string(verb) + "--help");
+        const Outcome answer = run(std::string(verb) + "--help");
         EXPECT_EQ(answer.status, 0);
         EXPECT_NE(answer.out.find("filial " + std::string(verb)), std::string::npos);
         EXPECT_NE(answer.out.find("genetic counselling"), std::string::npos);
@@ -219,7 +219,7 @@ TEST_F(Headless, NoTextSaysNan) {
                                   "score 3 1 1 --ratio 1:2:1 --join 1,2", "score plants.csv --ratio 3:1",
                                   "score 3 1 --ratio 3:1 --fitted 1", "score 30 5 5 10 --ratio 'f2(coupling, r=fit)'",
                                   "derive 'Aa Bb x Aa Bb'", "derive 'Aa Bb x Aa Bb' --linkage 0.2"}) {
-        const Run answer = run(arguments);
+        const Outcome answer = run(arguments);
         EXPECT_EQ(answer.status, 0) << arguments << ": " << answer.err;
         for (const char* bad : {"nan", "inf ", "∞", "{1}", "{2}"}) {
             EXPECT_EQ(answer.out.find(bad), std::string::npos) << arguments << '\n' << answer.out;

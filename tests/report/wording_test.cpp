@@ -20,6 +20,7 @@ MessageId id_at(std::size_t i) {
 
 TEST(Wording, EveryMessageHasATextAndItsPlaceholdersAreNumberedWithoutGaps) {
     static const std::regex placeholder(R"(\{(\d+)(\?[^{}|]*\|[^{}|]*)?\})");
+    static const std::regex slip(R"(\{\S|\S\})"); // "{ }" names the braces themselves
     for (std::size_t i = 0; i < message_count(); ++i) {
         const std::string text(english(id_at(i)));
         SCOPED_TRACE(message_name(id_at(i)));
@@ -33,7 +34,7 @@ TEST(Wording, EveryMessageHasATextAndItsPlaceholdersAreNumberedWithoutGaps) {
             EXPECT_EQ(number, expected++);
         }
         const std::string without = std::regex_replace(text, placeholder, "");
-        EXPECT_EQ(without.find_first_of("{}"), std::string::npos) << "a brace that is no placeholder: " << text;
+        EXPECT_FALSE(std::regex_search(without, slip)) << "a brace that is no placeholder: " << text;
         EXPECT_EQ(text.find("  "), std::string::npos);
     }
 }
