@@ -64,7 +64,8 @@ Json outlier_list(const std::vector<families::OddFamily>& outliers) {
 Json labelled(const std::string& label, const fit::GoodnessOfFit& fit) {
     Json object;
     object["label"] = label;
-    for (const auto& [name, value] : fit_object(fit).items()) {
+    const Json fields = fit_object(fit); // kept, because items() refers to it
+    for (const auto& [name, value] : fields.items()) {
         object[name] = value;
     }
     return object;
