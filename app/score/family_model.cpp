@@ -93,9 +93,29 @@ int FamilyModel::columnOf(ColumnKind wanted) const {
 
 const book::Family* FamilyModel::family(int row) const {
     const book::Cross* cross = workbook_->shownCross();
-    if (cross == nullptr || row < 0 || static_cast<std::size_t>(row) >= cross->families.size())
+    if (cross == nullptr || row < 0 || row > static_cast<int>(rows_.size()))
         return nullptr;
-    return &cross->families[static_cast<std::size_t>(row)];
+    const auto place = static_cast<std::size_t>(row);
+    if (place == rows_.size()) // what is being typed into the row "next family…"
+        return place < cross->families.size() ? &cross->families[place] : nullptr;
+    // By id: while rows come or go, the book is already ahead of the rows the view knows.
+    if (place < cross->families.size() && cross->families[place].id == rows_[place])
+        return &cross->families[place];
+    const auto found = std::find_if(cross->families.begin(), cross->families.end(),
+                                    [&](const book::Family& one) { return one.id == rows_[place]; });
+    return found == cross->families.end() ? nullptr : &*found;
+}
+
+const report::FamilyAnalysis* FamilyModel::analysed(int row) const {
+    const book::Family* shown = family(row);
+    if (shown == nullptr)
+        return nullptr;
+    const auto& all = workbook_->analysis().families;
+    const auto place = static_cast<std::size_t>(row);
+    if (place < all.size() && all[place].id == shown->id)
+        return &all[place];
+    const auto found = std::find_if(all.begin(), all.end(), [&](const auto& one) { return one.id == shown->id; });
+    return found == all.end() ? nullptr : &*found;
 }
 
 int FamilyModel::rowOf(const book::Id& id) const {
@@ -167,14 +187,14 @@ QString FamilyModel::cellText(const QModelIndex& index) const {
 
 QVariant FamilyModel::display(const QModelIndex& index) const {
     const ColumnKind what = kind(index.column());
-    if (what == ColumnKind::Family && family(index.row()) == nullptr)
+    if (what == ColumnKind::Family && isNextFamily(index.row()) && family(index.row()) == nullptr)
         return tr("next family…");
     if (what != ColumnKind::Total && what != ColumnKind::P)
         return cellText(index);
-    const auto& families = workbook_->analysis().families;
-    if (static_cast<std::size_t>(index.row()) >= families.size())
+    const report::FamilyAnalysis* found = analysed(index.row());
+    if (found == nullptr)
         return {};
-    const report::FamilyAnalysis& one = families[static_cast<std::size_t>(index.row())];
+    const report::FamilyAnalysis& one = *found;
     if (one.state == report::FamilyState::Blank && band(index.row()).isEmpty())
         return {};
     if (what == ColumnKind::Total)
@@ -186,10 +206,10 @@ QVariant FamilyModel::display(const QModelIndex& index) const {
 QVariant FamilyModel::toolTip(const QModelIndex& index) const {
     if (const Invalid* wrong = invalid(index))
         return wrong->reason;
-    const auto& families = workbook_->analysis().families;
-    if (kind(index.column()) != ColumnKind::P || static_cast<std::size_t>(index.row()) >= families.size())
+    const report::FamilyAnalysis* found = kind(index.column()) == ColumnKind::P ? analysed(index.row()) : nullptr;
+    if (found == nullptr)
         return {};
-    const report::FamilyAnalysis& one = families[static_cast<std::size_t>(index.row())];
+    const report::FamilyAnalysis& one = *found;
     if (!one.fit)
         return one.state == report::FamilyState::Incomplete ? tr("no P: a class is blank or was not looked at")
                                                             : tr("no P: no plants counted");
@@ -288,6 +308,8 @@ QVariant FamilyModel::headerData(int section, Qt::Orientation orientation, int r
 }
 
 Qt::ItemFlags FamilyModel::flags(const QModelIndex& index) const {
+    if (!index.isValid())
+        return Qt::NoItemFlags;
     Qt::ItemFlags flags = Qt::ItemIsSelectable | Qt::ItemIsEnabled;
     const ColumnKind what = kind(index.column());
     if (workbook_->readOnly() || what == ColumnKind::Total || what == ColumnKind::P)

@@ -73,6 +73,7 @@ private:
 
     void synchronise();
     void announce();
+    const report::FamilyAnalysis* analysed(int row) const; ///< of the family shown in a row; null where none
     const Invalid* invalid(const QModelIndex& index) const;
     const Invalid* firstInvalid(const book::Id& family) const;
     /// Puts a text into a copy of a family; what cannot be read is remembered in `wrong` and leaves the cell blank.
