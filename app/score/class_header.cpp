@@ -52,7 +52,7 @@ QSize ClassHeader::sizeHint() const {
     const book::Cross* cross = model() != nullptr ? workbook_->shownCross() : nullptr;
     for (int column = 1; model() != nullptr && column <= static_cast<int>(families_->classCount()); ++column) {
         const QString label = families_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
-        const int room = sectionSize(column) - kSwatch - 6 - kMargin - 2;
+        const int room = sectionSize(column) - kSwatch - 6 - kMargin;
         lines = std::max(lines, static_cast<int>(labelLines(label, room).size()));
     }
     const bool joined = cross != nullptr && !cross->hypothesis.joins.empty();
@@ -82,7 +82,7 @@ void ClassHeader::paintSection(QPainter* painter, const QRect& rect, int column)
         return;
     }
     const auto phenotype = static_cast<std::size_t>(column - 1);
-    const QStringList lines = labelLines(label, inside.width() + kMargin - 2 - kSwatch - 6);
+    const QStringList lines = labelLines(label, rect.width() - kMargin - kSwatch - 6);
     int y = inside.bottom() + 1 - kLine * (static_cast<int>(lines.size()) + 1);
     const QFontMetrics metrics(painter->font());
     int widest = 0;

@@ -50,10 +50,16 @@ void DepartureMapWidget::refresh() {
 std::vector<QStringList> DepartureMapWidget::tableRows() const {
     std::vector<QStringList> rows{
         {tr("Class"), tr("Observed"), tr("Expected"), tr("Plants off"), tr("Standard errors")}};
+    std::vector<double> expected;
     for (const report::ClassDeparture& one : map_.classes)
-        rows.push_back({QString::fromStdString(one.label), fixedText(one.observed, 0), fixedText(one.expected, 1),
+        expected.push_back(one.expected);
+    expected = report::rounded_to_sum(expected, 1); // as in the row below the families
+    for (std::size_t i = 0; i < map_.classes.size(); ++i) {
+        const report::ClassDeparture& one = map_.classes[i];
+        rows.push_back({QString::fromStdString(one.label), fixedText(one.observed, 0), fixedText(expected[i], 1),
                         signedText(one.plants, 1),
                         one.standard_errors ? signedText(*one.standard_errors, 2) : say(one.standard_errors.why_not)});
+    }
     return rows;
 }
 
@@ -79,6 +85,8 @@ void DepartureMapWidget::paintCaption(QPainter& painter, const QRectF& room) con
     painter.setFont(app::font(TextRole::Label));
     QRectF drawn;
     painter.drawText(room, Qt::TextWordWrap, tr("Departure from expected"), &drawn);
+    if (height() < 170 && room.width() < 130)
+        return; // low and narrow: the tooltip and the table twin say the rest
     painter.setFont(app::font(TextRole::Note));
     painter.setPen(tokens().muted);
     const QString words = tr("in standard errors;\nband: %1 of 100 samples;\nticks: single families")

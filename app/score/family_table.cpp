@@ -64,7 +64,7 @@ void FamilyTable::layOutColumns(int width) {
         return;
     const QFontMetrics small(app::font(TextRole::Label));
     const QFontMetrics body(app::font(TextRole::Body));
-    int family = 92;
+    int family = 84;
     for (const book::Id& id : model_->familyIds()) {
         if (const book::Family* one = model_->family(model_->rowOf(id)); one != nullptr && family < 150)
             family = std::max(family, body.horizontalAdvance(QString::fromStdString(one->label)) + space::kM);
@@ -73,12 +73,13 @@ void FamilyTable::layOutColumns(int width) {
     }
     family = std::min(family, 150);
     int left = width;
+    width_ = width;
     for (int column = 0; column < model_->columnCount(); ++column) {
         const ColumnKind kind = model_->kind(column);
         if (kind == ColumnKind::Class || isColumnHidden(column))
             continue;
         const QString label = model_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
-        const int own = std::max(small.horizontalAdvance(label) + 18, kind == ColumnKind::P ? 56 : 52);
+        const int own = std::max(small.horizontalAdvance(label) + 2 * space::kS, kind == ColumnKind::P ? 54 : 48);
         setColumnWidth(column, kind == ColumnKind::Family ? family : own);
         left -= columnWidth(column);
     }
@@ -91,7 +92,7 @@ void FamilyTable::layOutColumns(int width) {
 }
 
 int FamilyTable::contentHeight() const {
-    const bool bar = header_->length() > viewport()->width();
+    const bool bar = header_->length() > width_;
     return header_->sizeHint().height() + verticalHeader()->length() +
            (bar ? horizontalScrollBar()->sizeHint().height() : 0);
 }
@@ -123,6 +124,8 @@ void FamilyTable::paintEvent(QPaintEvent* event) {
         if (band.isEmpty() || row == reason_row_)
             continue;
         painter.setPen(at.data(FamilyModel::BandIsErrorRole).toBool() ? tokens().error : tokens().muted);
+        painter.fillRect(QRect(0, rowViewportPosition(row) + kRowHeight, viewport()->width(), kBandHeight),
+                         tokens().background);
         const QRect rect(0, rowViewportPosition(row) + kRowHeight - 2, viewport()->width() - space::kS, kBandHeight);
         painter.drawText(rect, Qt::AlignLeft | Qt::AlignVCenter,
                          painter.fontMetrics().elidedText(band, Qt::ElideRight, rect.width()));

@@ -78,6 +78,7 @@ private:
     QLineEdit* reason_ = nullptr;
     int reason_row_ = -1;
     bool sown_ = false;
+    int width_ = 0; ///< last shared among the columns
 };
 
 } // namespace filial::app

@@ -26,7 +26,7 @@ void HypothesisBlank::setNotation(const QString& notation) {
 }
 
 QSize HypothesisBlank::sizeHint() const {
-    return {fontMetrics().horizontalAdvance(text()) + 2 * space::kXs, 32};
+    return {fontMetrics().horizontalAdvance(text()) + 2 * space::kXs + 2, 32};
 }
 
 void HypothesisBlank::paintEvent(QPaintEvent* event) {

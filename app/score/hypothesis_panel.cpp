@@ -182,6 +182,7 @@ void HypothesisPanel::textEdited(const QString& text) {
     mark_->setError(wrong ? std::optional<Error>(read.error()) : std::nullopt);
     candidate_.reset();
     if (wrong || text.trimmed().isEmpty()) {
+        model_->setFilter({}, {}); // the whole catalogue is better than an empty list
         workbook_->setPreview({});
         showVerdict();
         return;

@@ -53,7 +53,7 @@ void MeaningColumn::build() {
     auto* all = new QVBoxLayout(inside);
     all->setContentsMargins(space::kL, space::kM, space::kL, space::kM);
     all->setSpacing(space::kM);
-    for (Section* section : {fit_, families_, cautions_, also_, account_, misfit_, sown_, detect_})
+    for (Section* section : {fit_, families_, cautions_, account_, misfit_, sown_, also_, detect_})
         all->addWidget(section);
     all->addStretch(1);
     all_families_ = new TextButton(tr("Back to all families"));

@@ -23,6 +23,14 @@ protected:
     void resizeEvent(QResizeEvent* event) override;
 
 private:
+    struct Caution {
+        QString text;
+        QString action; ///< text of its button; "" none
+        int join = -1;  ///< index into joins_
+        book::Id hint;  ///< family whose hint is dismissed
+    };
+    std::vector<Caution> cautionsOf(const report::CrossAnalysis& analysis);
+    void actOn(std::size_t caution);
     void build();
     void refresh();
     void refreshFit(const report::CrossAnalysis& analysis);
@@ -44,7 +52,7 @@ private:
     std::vector<Words*> caution_lines_;
     std::vector<TextButton*> caution_buttons_;
     std::vector<std::vector<std::size_t>> joins_;
-    std::vector<book::Id> hinted_;
+    std::vector<Caution> cautions_shown_;
     Runner<report::Alternatives> runner_;
     QTimer later_;
 };

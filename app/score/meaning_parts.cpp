@@ -127,13 +127,7 @@ void MeaningColumn::refreshFamilies(const report::CrossAnalysis& analysis) {
     sources_->setRows(rows);
 }
 
-void MeaningColumn::refreshCautions(const report::CrossAnalysis& analysis) {
-    struct Caution {
-        QString text;
-        QString action;
-        int join = -1;
-        book::Id hint;
-    };
+std::vector<MeaningColumn::Caution> MeaningColumn::cautionsOf(const report::CrossAnalysis& analysis) {
     std::vector<Caution> cautions;
     joins_.clear();
     if (analysis.totals) {
@@ -155,40 +149,49 @@ void MeaningColumn::refreshCautions(const report::CrossAnalysis& analysis) {
     for (const report::FamilyAnalysis& family : analysis.families) {
         for (const Message& hint : family.hints) {
             const bool percentages = hint.id == MessageId::FitLooksLikePercentages;
-            cautions.push_back({QString::fromStdString(family.label) + QStringLiteral(": ") + say(hint),
-                                percentages ? tr("They are plants: dismiss") : QString(), -1, family.id});
+            const QString label = QString::fromStdString(family.label);
+            cautions.push_back({label + QStringLiteral(": ") + say(hint),
+                                percentages ? tr("%1 holds plants: dismiss").arg(label) : QString(), -1, family.id});
         }
     }
+    return cautions;
+}
+
+void MeaningColumn::refreshCautions(const report::CrossAnalysis& analysis) {
+    const std::vector<Caution> cautions = cautionsOf(analysis);
     for (std::size_t i = caution_lines_.size(); i < cautions.size(); ++i) {
         auto* line = new Words(TextRole::Note, Ink::Warning, cautions_);
         line->setWordWrap(true);
+        line->setObjectName(QStringLiteral("caution-%1").arg(i));
         auto* button = new TextButton({}, cautions_);
+        connect(button, &QPushButton::clicked, this, [this, i] { actOn(i); });
         cautions_->content()->addWidget(line);
         cautions_->content()->addWidget(button, 0, Qt::AlignLeft);
         caution_lines_.push_back(line);
         caution_buttons_.push_back(button);
     }
     for (std::size_t i = 0; i < caution_lines_.size(); ++i) {
-        const bool used = i < cautions.size();
-        caution_lines_[i]->setObjectName(QStringLiteral("caution-%1").arg(i));
-        caution_lines_[i]->say(used && !cautions[i].text.isEmpty() ? QStringLiteral("! ") + cautions[i].text
-                                                                   : QString());
+        const Caution shown = i < cautions.size() ? cautions[i] : Caution{};
+        caution_lines_[i]->say(shown.text.isEmpty() ? QString() : QStringLiteral("! ") + shown.text);
         TextButton* button = caution_buttons_[i];
-        button->disconnect(this);
-        button->setVisible(used && !cautions[i].action.isEmpty());
-        if (!used || cautions[i].action.isEmpty())
-            continue;
-        button->setObjectName(cautions[i].join >= 0 ? QStringLiteral("propose-join-%1").arg(cautions[i].join)
-                                                    : QStringLiteral("dismiss-hint-%1").arg(i));
-        button->setText(cautions[i].action);
+        button->setVisible(!shown.action.isEmpty());
+        button->setObjectName(shown.join >= 0 ? QStringLiteral("propose-join-%1").arg(shown.join)
+                                              : QStringLiteral("dismiss-hint-%1").arg(i));
+        button->setText(shown.action);
         button->updateGeometry();
-        if (cautions[i].join >= 0)
-            connect(button, &QPushButton::clicked, this,
-                    [this, join = cautions[i].join] { Q_EMIT joinRequested(joins_[static_cast<std::size_t>(join)]); });
-        else
-            connect(button, &QPushButton::clicked, this, [this, id = cautions[i].hint] { dismissHint(id); });
     }
+    cautions_shown_ = cautions;
     cautions_->setVisible(!cautions.empty());
+}
+
+void MeaningColumn::actOn(std::size_t caution) {
+    if (caution >= cautions_shown_.size())
+        return;
+    const Caution shown = cautions_shown_[caution];
+    if (shown.join >= 0)
+        Q_EMIT joinRequested(joins_[static_cast<std::size_t>(shown.join)]);
+    else if (!shown.hint.empty())
+        dismissHint(shown.hint);
 }
 
 void MeaningColumn::dismissHint(const book::Id& id) {

@@ -2,6 +2,7 @@
 #include "app/score/score_pane.h"
 
 #include <algorithm>
+#include <map>
 
 #include <QAction>
 #include <QHeaderView>
@@ -9,6 +10,7 @@
 
 #include "app/common/text.h"
 #include "app/score/hypothesis_panel.h"
+#include "core/inheritance/catalogue.h"
 
 namespace filial::app {
 
@@ -19,6 +21,22 @@ TextButton* toggle(const QString& text, const char* id, QWidget* parent) {
     button->setObjectName(QString::fromLatin1(id));
     button->setCheckable(true);
     return button;
+}
+
+/// The name chosen with the hypothesis, or the catalogue's where the notation has one meaning only.
+QString meaningOf(const book::HypothesisUse& use) {
+    if (!use.name.empty() || use.notation.empty())
+        return QString::fromStdString(use.name);
+    static std::map<std::string, QString> known;
+    const auto found = known.find(use.notation);
+    if (found != known.end())
+        return found->second;
+    QStringList names;
+    for (const inheritance::CatalogueEntry& entry : inheritance::catalogue()) {
+        if (entry.hypothesis.notation() == use.notation)
+            names << QString::fromStdString(entry.name);
+    }
+    return known[use.notation] = names.size() == 1 ? names.front() : QString();
 }
 
 bool countsSeen(const book::Cross& cross) {
@@ -73,6 +91,11 @@ void ScorePane::build() {
     pictures->addButton(show_map_);
     pictures->addButton(show_chart_);
     show_map_->setChecked(true);
+    twin_->viewport()->setAutoFillBackground(false);
+    // A click does not take the keys away from the table.
+    for (QPushButton* button :
+         std::initializer_list<QPushButton*>{sown_, paste_, join_, with_, show_map_, show_chart_, as_table_})
+        button->setFocusPolicy(Qt::TabFocus);
     panel_->hide();
 }
 
@@ -114,18 +137,18 @@ void ScorePane::wire() {
 void ScorePane::refresh() {
     const book::Cross* cross = workbook_->shownCross();
     const bool any = cross != nullptr;
-    name_->say(any ? QString::fromStdString(cross->name) : tr("No cross in this book yet."));
+    if (!any)
+        name_->say(tr("No cross in this book yet."));
     for (QWidget* widget : std::initializer_list<QWidget*>{against_, blank_, sown_, paste_, table_, totals_})
         widget->setVisible(any);
     if (!any) {
         arrange();
         return;
     }
-    const QString before = blank_->text();
     blank_->setNotation(QString::fromStdString(cross->hypothesis.notation));
     QStringList meaning;
-    if (!cross->hypothesis.name.empty())
-        meaning << QString::fromStdString(cross->hypothesis.name);
+    if (const QString means = meaningOf(cross->hypothesis); !means.isEmpty())
+        meaning << means;
     if (!cross->date.empty())
         meaning << tr("sown %1").arg(QString::fromStdString(cross->date));
     if (!cross->stage.empty())
@@ -181,6 +204,8 @@ void ScorePane::refreshTwin() {
     }
     twin_->horizontalHeaderItem(0)->setTextAlignment(Qt::AlignLeft | Qt::AlignVCenter);
     twin_->setColumnWidth(0, 170);
+    for (int c = 1; c < twin_->columnCount(); ++c)
+        twin_->setColumnWidth(c, c + 1 == twin_->columnCount() ? 140 : 104);
 }
 
 void ScorePane::showPicture() {
@@ -256,11 +281,22 @@ void ScorePane::arrangeHead(int left, int width) {
     paste_->setGeometry(right - pasteSize.width(), top, pasteSize.width(), 32);
     const int sownWidth = sown_->sizeHint().width();
     sown_->setGeometry(paste_->x() - space::kS - sownWidth, top, sownWidth, 32);
-    const int room = sown_->x() - space::kM - left;
     const int againstWidth = against_->sizeHint().width();
+    const QString name =
+        workbook_->shownCross() == nullptr ? name_->text() : QString::fromStdString(workbook_->shownCross()->name);
+    const QFontMetrics metrics(name_->font());
+    const int wanted = metrics.horizontalAdvance(name) + 1;
+    // Where the head is too long, the button that also has a key makes room.
+    const bool tight = wanted + againstWidth + blank_->sizeHint().width() + 34 > sown_->x() - left;
+    paste_->setVisible(workbook_->shownCross() != nullptr && !tight);
+    if (tight)
+        sown_->move(right - sownWidth, top);
+    const int room = sown_->x() - space::kM - left;
     const int blankWidth = std::min(blank_->sizeHint().width(), std::max(80, room - againstWidth - 100));
-    const int nameWidth = std::min(name_->sizeHint().width(), room - againstWidth - blankWidth - 22);
-    name_->setGeometry(left, top, workbook_->shownCross() == nullptr ? width : std::max(60, nameWidth), 32);
+    const int nameWidth =
+        workbook_->shownCross() == nullptr ? width : std::clamp(room - againstWidth - blankWidth - 22, 60, wanted);
+    name_->say(metrics.elidedText(name, Qt::ElideRight, nameWidth), name);
+    name_->setGeometry(left, top, nameWidth, 32);
     against_->setGeometry(name_->x() + name_->width() + 14, top, againstWidth, 32);
     blank_->setGeometry(against_->x() + againstWidth + 6, top, blankWidth, 32);
     const bool joinable = table_->classHeader()->chosenClasses().size() >= 2;

@@ -372,6 +372,31 @@ TEST_F(ScoreDeskTest, SownColumnsAreEditedAndThePictureHasItsTable) {
     EXPECT_TRUE(said.contains("plants"));
 }
 
+TEST_F(ScoreDeskTest, SmallClassesAreJoinedFromTheirCautionAndPercentagesDismissed) {
+    open(stemLeafCross());
+    goTo(0, 1);
+    QApplication::clipboard()->setText("20\t6\t5\t1\n");
+    press(Qt::Key_V, Qt::ControlModifier);
+    auto* join = window_->findChild<QPushButton*>("propose-join-0");
+    ASSERT_NE(join, nullptr);
+    ASSERT_TRUE(join->isVisible());
+    QTest::mouseClick(join, Qt::LeftButton);
+    EXPECT_EQ(cross().hypothesis.joins.size(), 1u);
+    EXPECT_EQ(words("df-p"), "2");
+    workbook_->undo();
+    goTo(0, 1);
+    QApplication::clipboard()->setText("56\t19\t19\t6\n");
+    press(Qt::Key_V, Qt::ControlModifier);
+    QPushButton* dismiss = nullptr;
+    for (auto* button : window_->findChildren<QPushButton*>()) {
+        if (button->objectName().startsWith("dismiss-hint") && button->isVisible())
+            dismiss = button;
+    }
+    ASSERT_NE(dismiss, nullptr);
+    QTest::mouseClick(dismiss, Qt::LeftButton);
+    EXPECT_TRUE(workbook_->analysis().families[0].hints.empty());
+}
+
 TEST_F(ScoreDeskTest, AccessibleNamesAreUniqueAndHoldWhatIsSeen) {
     open(stemLeafCross());
     QStringList names;
