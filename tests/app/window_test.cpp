@@ -261,8 +261,9 @@ void checkNames(QWidget& window) {
                      name.startsWith(QLatin1String("filial::")));
         EXPECT_FALSE(names.contains(name)) << name.toStdString();
         names << name;
-        if (auto* button = qobject_cast<QAbstractButton*>(one))
+        if (auto* button = qobject_cast<QAbstractButton*>(one)) {
             EXPECT_TRUE(name.contains(button->text())) << button->text().toStdString();
+        }
     }
     EXPECT_FALSE(names.isEmpty());
 }
