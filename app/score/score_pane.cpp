@@ -5,6 +5,7 @@
 #include <map>
 
 #include <QAction>
+#include <QEvent>
 #include <QHeaderView>
 #include <QScrollBar>
 
