@@ -74,6 +74,7 @@ void MeaningColumn::build() {
     sown_note_ = paragraph(TextRole::Note, Ink::Muted, "sown-note", sown_);
     detect_rows_ = grid("detect-rows", detect_);
     detect_note_ = paragraph(TextRole::Note, Ink::Muted, "detect-note", detect_);
+    also_->hide(); // until it has been worked out
     setWidget(inside);
     inside->setAutoFillBackground(false);
     viewport()->setAutoFillBackground(true);

@@ -51,7 +51,7 @@ ScorePane::ScorePane(ScoreView* view, QWidget* parent)
     : QWidget(parent), view_(view), workbook_(view->workbook()), model_(new FamilyModel(workbook_, this)),
       name_(new Words(TextRole::Verdict, Ink::Normal, this)), against_(new Words(TextRole::Verdict, Ink::Normal, this)),
       sub_(new Words(TextRole::Body, Ink::Muted, this)), notes_(new Words(TextRole::Note, Ink::Muted, this)),
-      blank_(new HypothesisBlank(this)), sown_(new QPushButton(tr("Sown to scored"), this)),
+      blank_(new HypothesisBlank(this)), sown_(new QPushButton(tr("Sown, up, alive"), this)),
       paste_(new QPushButton(tr("Paste"), this)), join_(new TextButton({}, this)), with_(new TextButton({}, this)),
       table_(new FamilyTable(workbook_, model_, this)), totals_(new TotalsTable(view, table_, this)),
       map_(new DepartureMapWidget(view, table_, this)), chart_(new ChartWidget(this)), twin_(new QTableWidget(this)),
@@ -154,7 +154,8 @@ void ScorePane::refresh() {
         meaning << tr("sown %1").arg(QString::fromStdString(cross->date));
     if (!cross->stage.empty())
         meaning << tr("scored at the %1").arg(QString::fromStdString(cross->stage));
-    sub_->setText(meaning.join(QStringLiteral(" · ")));
+    meaning_ = meaning.join(QStringLiteral(" · "));
+    sub_->say(meaning_, meaning_);
     paste_->setEnabled(!workbook_->readOnly());
     refreshNotes();
     refreshChart();
@@ -305,7 +306,7 @@ void ScorePane::arrangeHead(int left, int width) {
     const int joinWidth = joinable ? join_->sizeHint().width() : 0;
     join_->setGeometry(right - joinWidth, top + 34, joinWidth, 24);
     sub_->setGeometry(left, top + 34, width - joinWidth - space::kS, 22);
-    sub_->setVisible(!sub_->text().isEmpty());
+    sub_->say(QFontMetrics(sub_->font()).elidedText(meaning_, Qt::ElideRight, sub_->width()), meaning_);
 }
 
 void ScorePane::arrange() {

@@ -46,6 +46,7 @@ private:
     void showPicture();
 
     ScoreView* view_;
+    QString meaning_; ///< second line in full
     Workbook* workbook_;
     FamilyModel* model_;
     Words *name_, *against_, *sub_, *notes_;
