@@ -119,6 +119,9 @@ double Binomial::excess(std::int64_t x) const {
         const Wide total = Wide{a_} + b_;
         return static_cast<double>(total * x - Wide{n_} * a_) / static_cast<double>(total);
     }
+    // By the smaller of p and q, which carries the digits.
+    if (q_ < p_)
+        return std::fma(static_cast<double>(n_), q_, static_cast<double>(x - n_));
     return std::fma(-static_cast<double>(n_), p_, static_cast<double>(x));
 }
 
@@ -145,18 +148,21 @@ double Binomial::log_pmf(std::int64_t x) const {
            0.5 * std::log(2.0 * std::numbers::pi * successes * (failures / n));
 }
 
+double Binomial::upper_tail_over_term(std::int64_t x) const {
+    const auto from = static_cast<double>(x);
+    const auto rest = static_cast<double>(n_ - x);
+    const double odds = p_ / q_;
+    if (sd_ <= kSumUpToDeviation || rest == 0.0)
+        return sum_of_products(n_ - x, [&](double j) { return odds * (rest - j + 1.0) / (from + j); });
+    return tail_over_term(from, rest, odds, (excess(x) - q_) / q_);
+}
+
 double Binomial::log_upper_tail(std::int64_t x) const {
     if (x > n_)
         return -kInfinity;
     if (x <= 0)
         return 0.0;
-    const auto from = static_cast<double>(x);
-    const auto rest = static_cast<double>(n_ - x);
-    const double odds = p_ / q_;
-    if (sd_ <= kSumUpToDeviation || rest == 0.0)
-        return log_pmf(x) +
-               std::log(sum_of_products(n_ - x, [&](double j) { return odds * (rest - j + 1.0) / (from + j); }));
-    return log_pmf(x) + std::log(tail_over_term(from, rest, odds, (excess(x) - q_) / q_));
+    return log_pmf(x) + std::log(upper_tail_over_term(x));
 }
 
 double Binomial::log_lower_tail(std::int64_t x) const {

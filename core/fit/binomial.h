@@ -29,6 +29,8 @@ public:
     /// ln P(X <= x) for x <= mode, ln P(X >= x) for x > mode; -infinity outside 0..n. The tails away from the mode.
     [[nodiscard]] double log_lower_tail(std::int64_t x) const;
     [[nodiscard]] double log_upper_tail(std::int64_t x) const;
+    /// P(X >= x) / P(X = x) for 1 <= x <= n.
+    [[nodiscard]] double upper_tail_over_term(std::int64_t x) const;
     /// A bound for the relative error of a tail whose logarithm is `log_tail`: rounding of the leading term, of the
     /// summation and the truncated rest.
     [[nodiscard]] double relative_error_bound(double log_tail) const;

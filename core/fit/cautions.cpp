@@ -143,8 +143,10 @@ void caution_order(GoodnessOfFit& result, const Sample& sample) {
 void set_cautions(GoodnessOfFit& result, const Sample& sample) {
     if (sample.n == 0)
         return;
-    caution_small(result, sample);
-    caution_too_close(result);
+    if (!impossible(sample)) { // what cannot be is no question of large enough numbers
+        caution_small(result, sample);
+        caution_too_close(result);
+    }
     if (result.input.joins_after_seeing && !result.input.joins.empty())
         result.cautions.push_back({MessageId::FitJoinedAfterSeeing, {}});
     caution_percentages(result, sample);

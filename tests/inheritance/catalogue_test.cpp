@@ -62,7 +62,7 @@ TEST(Catalogue, IsCompleteInWords) {
     }
 }
 
-TEST(Catalogue, EqualsTheEnumerationOfGametesAndZygotes) {
+TEST(CatalogueOracle, EqualsTheEnumerationOfGametesAndZygotes) {
     std::vector<OracleCase> cases;
     for (const CatalogueEntry& entry : catalogue())
         cases.push_back({entry.cross, entry.group == CatalogueGroup::Linked ? "0.2" : "", entry.show});
@@ -83,7 +83,7 @@ TEST(Catalogue, EqualsTheEnumerationOfGametesAndZygotes) {
     }
 }
 
-TEST(Catalogue, LinkedEntriesEqualTheEnumerationWithTheirSlopes) {
+TEST(CatalogueOracle, LinkedEntriesEqualTheEnumerationWithTheirSlopes) {
     const std::vector<std::string> rs{"0", "0.001", "0.0625", "0.2", "0.3333333333333333", "0.4999", "0.5"};
     std::vector<OracleCase> cases;
     std::vector<std::pair<const CatalogueEntry*, double>> asked;

@@ -124,7 +124,7 @@ TEST(Derive, SaysWhichPhaseWasTaken) {
 
 // All groupings of the four classes of two loci with dominance: which ratios there are is in methods texts (common
 // practice); that each grouping gives its ratio is checked by the enumeration.
-TEST(Derive, TwoLociWithDominanceGiveExactlyTenRatios) {
+TEST(DeriveOracle, TwoLociWithDominanceGiveExactlyTenRatios) {
     const std::vector<std::string> classes{"A_B_", "A_bb", "aaB_", "aabb"};
     std::vector<OracleCase> cases;
     for (unsigned code = 0; code < 256; ++code) {
@@ -151,7 +151,7 @@ TEST(Derive, TwoLociWithDominanceGiveExactlyTenRatios) {
     EXPECT_EQ(ratios, ten);
 }
 
-class RandomCrosses : public testing::Test {
+class RandomCrossesOracle : public testing::Test {
 protected:
     std::mt19937 random_{20240229};
     std::size_t below(std::size_t n) { return random_() % n; }
@@ -200,7 +200,7 @@ protected:
     }
 };
 
-TEST_F(RandomCrosses, EqualTheEnumerationExactly) {
+TEST_F(RandomCrossesOracle, EqualTheEnumerationExactly) {
     std::vector<OracleCase> cases;
     for (int i = 0; i < 300; ++i) {
         const std::size_t loci = 1 + below(3);
@@ -215,7 +215,7 @@ TEST_F(RandomCrosses, EqualTheEnumerationExactly) {
     }
 }
 
-TEST_F(RandomCrosses, EqualTheEnumerationWithLinkage) {
+TEST_F(RandomCrossesOracle, EqualTheEnumerationWithLinkage) {
     std::vector<OracleCase> cases;
     for (int i = 0; i < 100; ++i) {
         const std::size_t loci = 2 + below(2);

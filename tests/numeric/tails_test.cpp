@@ -53,7 +53,7 @@ TEST(TailsTest, UpperTailsDeepAndNearOne) { // A03: Abramowitz & Stegun 1964, ta
     }
 }
 
-TEST(TailsTest, DeepTailsInMpmath) {
+TEST(TailsOracle, DeepTailsInMpmath) {
     std::vector<Row> rows;
     for (const double df : {1.0, 2.0, 3.0, 8.0, 26.0, 63.0, 255.0})
         for (const double x : {1e-9, 1e-3, 0.3, 1.0, 7.8, 20.0, 83.0, 300.0, 700.0, 1375.0, 1500.0, 5000.0, 1e5})
