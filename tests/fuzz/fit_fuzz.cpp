@@ -1,5 +1,5 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
-// Any counts, weights and joins: no crash, the account adds to df, P and brackets are in order.
+// Any counts, weights and joins: no crash, the account adds to df, P, brackets and limits are in order.
 #include <cstddef>
 #include <cstdint>
 #include <cstdlib>
@@ -14,7 +14,21 @@ void require(bool condition) {
         std::abort();
 }
 
+void check_limits(const filial::Maybe<double>& low, const filial::Maybe<double>& high) {
+    if (low && high)
+        require(*low >= 0.0 && *low <= *high && *high <= 1.0); // fails for NaN, too
+}
+
 void check(const filial::fit::GoodnessOfFit& result) {
+    for (const auto& one : result.classes) {
+        check_limits(one.interval_low, one.interval_high);
+        check_limits(one.exact_low, one.exact_high);
+        check_limits(one.simultaneous_low, one.simultaneous_high);
+        if (one.p)
+            require(*one.p >= 0.0 && *one.p <= 1.0);
+    }
+    for (const auto& one : result.detectable)
+        require(one.w > 0.0);
     int sum = 0;
     for (const auto& charge : result.df_account)
         sum += charge.charge;
