@@ -1,4 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
+#include <filesystem>
+#include <system_error>
+
 #include "app/headless/input.h"
 #include "app/headless/options.h"
 #include "app/headless/verbs.h"
@@ -22,6 +25,12 @@ bool is_file(const std::vector<std::string>& plain) {
     const Result<book::Cell> cell = book::read_cell(plain.front());
     const bool number_like = cell.ok() || cell.error().message.id != MessageId::CountNotANumber;
     return !number_like || (cell.ok() && cell.value().state != book::CellState::Number);
+}
+
+/// A word that names no file, and does not look as if it should.
+bool names_no_file(const std::string& word) {
+    std::error_code ignored;
+    return word.find_first_of("./") == std::string::npos && !std::filesystem::exists(word, ignored);
 }
 
 Result<std::vector<Count>> read_counts(const std::vector<std::string>& plain) {
@@ -128,6 +137,9 @@ Result<Answer> score_sample(const Arguments& arguments) {
 }
 
 Result<Answer> score_file(const Arguments& arguments) {
+    if (names_no_file(arguments.plain.front())) {
+        return error_at(argument_place(0, arguments.plain.front()), {MessageId::HeadlessNeitherCountNorFile, {}});
+    }
     if (arguments.has("--labels")) {
         return error_at(option_place("--labels"), {MessageId::HeadlessLabelsFile, {}});
     }

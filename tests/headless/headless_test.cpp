@@ -129,6 +129,7 @@ TEST_F(Headless, WrongArgumentsAreRefusedByPlace) {
     expect_refused("score 3 NaN --ratio 3:1", 2, "argument 2");
     expect_refused("score 3 '' --ratio 3:1", 2, "argument 2");
     expect_refused("score 5 --ratio 3:1", 2, "argument 1");
+    expect_refused("score abc --ratio 3:1", 2, "argument 1 (“abc”): neither a count nor a file");
     expect_refused("score --ratio 3:1", 2, "score");
     expect_refused("score 3 1", 2, "--ratio");
     expect_refused("score 3 1 --ratio 9:3:3:1", 2, "--ratio");
