@@ -3,11 +3,13 @@
 
 #include <utility>
 
+#include <QDesktopServices>
 #include <QDialog>
 #include <QFileDialog>
 #include <QHBoxLayout>
 #include <QLabel>
 #include <QPushButton>
+#include <QUrl>
 #include <QVBoxLayout>
 
 #include "app/common/theme.h"
@@ -24,6 +26,7 @@ public:
         return QFileDialog::getSaveFileName(parent, title, suggestion, filter);
     }
     int choose(QWidget* parent, const QString& question, const QString& detail, const QStringList& answers) override;
+    void showFile(const QString& path) override { QDesktopServices::openUrl(QUrl::fromLocalFile(path)); }
 };
 
 int RealAsk::choose(QWidget* parent, const QString& question, const QString& detail, const QStringList& answers) {

@@ -19,7 +19,8 @@ namespace filial::app {
 namespace {
 
 constexpr int kControlHeight = 32;
-constexpr int kRingRoom = 4; // a ring of 2 px, 2 px away
+constexpr int kStepWidth = 20; // the two steps of a spin box
+constexpr int kRingRoom = 4;   // a ring of 2 px, 2 px away
 
 template <class Option> const Option* as(const QStyleOption* option) {
     return qstyleoption_cast<const Option*>(option);
@@ -137,6 +138,8 @@ void HouseStyle::drawComplexControl(ComplexControl control, const QStyleOptionCo
                                     const QWidget* widget) const {
     if (const auto* combo = as<QStyleOptionComboBox>(option); control == CC_ComboBox && combo != nullptr)
         return parts::comboBox(*painter, *combo, widget);
+    if (const auto* spin = as<QStyleOptionSpinBox>(option); control == CC_SpinBox && spin != nullptr)
+        return parts::spinBox(*painter, *spin, widget);
     if (const auto* bar = as<QStyleOptionSlider>(option); control == CC_ScrollBar && bar != nullptr)
         return parts::scrollBar(*painter, *bar, subControlRect(control, option, SC_ScrollBarSlider, widget));
     QProxyStyle::drawComplexControl(control, option, painter, widget);
@@ -144,6 +147,20 @@ void HouseStyle::drawComplexControl(ComplexControl control, const QStyleOptionCo
 
 QRect HouseStyle::subControlRect(ComplexControl control, const QStyleOptionComplex* option, SubControl part,
                                  const QWidget* widget) const {
+    if (control == CC_SpinBox) {
+        const QRect inside = option->rect.adjusted(1, 1, -1, -1);
+        const QRect steps(inside.right() + 1 - kStepWidth, inside.top(), kStepWidth, inside.height());
+        switch (part) {
+        case SC_SpinBoxUp:
+            return {steps.left(), steps.top(), steps.width(), steps.height() / 2};
+        case SC_SpinBoxDown:
+            return {steps.left(), steps.top() + steps.height() / 2, steps.width(), steps.height() - steps.height() / 2};
+        case SC_SpinBoxEditField:
+            return inside.adjusted(0, 0, -kStepWidth, 0);
+        default:
+            return option->rect;
+        }
+    }
     const auto* bar = as<QStyleOptionSlider>(option);
     if (control != CC_ScrollBar || bar == nullptr)
         return QProxyStyle::subControlRect(control, option, part, widget);
@@ -187,6 +204,7 @@ QSize HouseStyle::sizeFromContents(ContentsType type, const QStyleOption* option
         if (const auto* frame = as<QStyleOptionFrame>(option); frame != nullptr && frame->lineWidth > 0)
             size.setHeight(std::max(kControlHeight, size.height()));
         return size;
+    case CT_SpinBox:
     case CT_ComboBox:
         return {size.width() + space::kM, std::max(kControlHeight, size.height())};
     case CT_MenuItem:

@@ -3,6 +3,8 @@
 
 #include <algorithm>
 
+#include <QAbstractSpinBox>
+#include <QApplication>
 #include <QPainter>
 #include <QPainterPath>
 #include <QStyle>
@@ -136,6 +138,22 @@ void comboBox(QPainter& painter, const QStyleOptionComboBox& combo, const QWidge
         rounded(painter, combo.rect, radius::kCell, tinted(t.surface, hover ? 0.05 : 0.0), t.controlBorder);
     }
     chevron(painter, QRect(combo.rect.right() - 24, combo.rect.top(), 20, combo.rect.height()), 0, t.muted);
+}
+
+void spinBox(QPainter& painter, const QStyleOptionSpinBox& spin, const QWidget* widget) {
+    const Tokens& t = tokens();
+    fieldPanel(painter, spin, widget);
+    const QStyle* style = widget != nullptr ? widget->style() : QApplication::style();
+    for (const bool up : {true, false}) {
+        const auto part = up ? QStyle::SC_SpinBoxUp : QStyle::SC_SpinBoxDown;
+        const QRect r = style->subControlRect(QStyle::CC_SpinBox, &spin, part, widget);
+        const bool able =
+            (spin.state & QStyle::State_Enabled) != 0 &&
+            spin.stepEnabled.testFlag(up ? QAbstractSpinBox::StepUpEnabled : QAbstractSpinBox::StepDownEnabled);
+        if (able && spin.activeSubControls.testFlag(part))
+            painter.fillRect(r, tinted(t.surface, (spin.state & QStyle::State_Sunken) != 0 ? 0.10 : 0.05));
+        chevron(painter, r, up ? 180 : 0, able ? t.muted : t.controlBorder);
+    }
 }
 
 void scrollBar(QPainter& painter, const QStyleOptionSlider& bar, const QRect& slider) {

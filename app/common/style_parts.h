@@ -10,6 +10,7 @@ class QStyleOptionComboBox;
 class QStyleOptionHeader;
 class QStyleOptionMenuItem;
 class QStyleOptionSlider;
+class QStyleOptionSpinBox;
 class QStyleOptionTab;
 class QWidget;
 
@@ -30,6 +31,7 @@ void headerLabel(QPainter& painter, const QStyleOptionHeader& header);
 void tabShape(QPainter& painter, const QStyleOptionTab& tab);
 void tabLabel(QPainter& painter, const QStyleOptionTab& tab);
 void comboBox(QPainter& painter, const QStyleOptionComboBox& combo, const QWidget* widget);
+void spinBox(QPainter& painter, const QStyleOptionSpinBox& spin, const QWidget* widget);
 void scrollBar(QPainter& painter, const QStyleOptionSlider& bar, const QRect& slider);
 
 } // namespace filial::app::parts

@@ -6,9 +6,15 @@
 #include <QFileInfo>
 #include <QSettings>
 
+#include "app/common/runner.h"
 #include "app/common/text.h"
 
 namespace filial::app {
+
+namespace {
+const double kUsualAlpha = report::AnalysisOptions().alpha;
+constexpr std::size_t kManyFamilies = 1000; // more: a full analysis could hold up a key press
+} // namespace
 
 struct Workbook::Private {
     std::unique_ptr<book::Session> session;
@@ -16,8 +22,12 @@ struct Workbook::Private {
     std::size_t crossIndex = 0; // where the current cross stood, to choose a neighbour when it goes
     std::vector<book::Id> families;
     std::optional<book::Cross> preview;
-    std::optional<report::CrossAnalysis> analysis;
-    double alpha = 0.05;
+    using Analysis = std::shared_ptr<const report::CrossAnalysis>;
+    Analysis analysis;
+    Analysis previous; // the last one: what has not changed is taken over from it
+    Runner<Analysis> runner;
+    bool pending = false; // the runner is at it
+    double alpha = kUsualAlpha;
 };
 
 Workbook::Workbook(std::unique_ptr<book::Session> session, QObject* parent)
@@ -25,11 +35,11 @@ Workbook::Workbook(std::unique_ptr<book::Session> session, QObject* parent)
     p_->session = std::move(session);
     const QSettings settings;
     p_->session->set_who(settings.value(QStringLiteral("who")).toString().toStdString());
-    p_->alpha = settings.value(QStringLiteral("alpha"), 0.05).toDouble();
-    if (!(p_->alpha > 0.0 && p_->alpha < 1.0))
-        p_->alpha = 0.05;
+    p_->alpha = rememberedAlpha();
     if (!book().crosses.empty())
         p_->cross = book().crosses.front().id;
+    connect(&p_->runner, &RunnerBase::busyChanged, this, &Workbook::busyChanged);
+    outdateAnalysis();
 }
 
 Workbook::~Workbook() = default;
@@ -64,7 +74,7 @@ void Workbook::setCurrentCross(const book::Id& id) {
         return;
     p_->cross = id;
     p_->preview.reset();
-    p_->analysis.reset();
+    outdateAnalysis();
     const bool hadSelection = !p_->families.empty();
     p_->families.clear();
     rememberPlace();
@@ -82,7 +92,7 @@ void Workbook::setSelectedFamilies(std::vector<book::Id> families) {
     if (families == p_->families)
         return;
     p_->families = std::move(families);
-    p_->analysis.reset();
+    outdateAnalysis();
     Q_EMIT selectionChanged();
     Q_EMIT analysisChanged();
 }
@@ -96,7 +106,7 @@ void Workbook::rememberPlace() {
 
 void Workbook::afterChange() {
     p_->preview.reset();
-    p_->analysis.reset();
+    outdateAnalysis();
     bool moved = false;
     if (currentCross() == nullptr) {
         const auto& crosses = book().crosses;
@@ -179,7 +189,7 @@ void Workbook::setPreview(std::optional<book::Cross> preview) {
     if (preview == p_->preview)
         return;
     p_->preview = std::move(preview);
-    p_->analysis.reset();
+    outdateAnalysis();
     Q_EMIT analysisChanged();
 }
 
@@ -187,14 +197,52 @@ const book::Cross* Workbook::shownCross() const {
     return p_->preview ? &*p_->preview : currentCross();
 }
 
-const report::CrossAnalysis& Workbook::analysis() const {
-    if (!p_->analysis) {
-        report::AnalysisOptions options;
-        options.alpha = p_->alpha;
-        options.selection = p_->families;
-        const book::Cross* cross = shownCross();
-        p_->analysis = cross != nullptr ? report::analyse(*cross, options) : report::CrossAnalysis{};
+report::AnalysisOptions Workbook::analysisOptions() const {
+    report::AnalysisOptions options;
+    options.alpha = p_->alpha;
+    options.selection = p_->families;
+    return options;
+}
+
+void Workbook::outdateAnalysis() {
+    if (p_->analysis)
+        p_->previous = std::move(p_->analysis);
+    p_->analysis.reset();
+    const book::Cross* cross = shownCross();
+    p_->pending = cross != nullptr && cross->families.size() > kManyFamilies;
+    if (!p_->pending) {
+        p_->runner.cancel();
+        return;
     }
+    p_->runner.request(
+        [cross = *cross, options = analysisOptions(), previous = p_->previous](const CancellationToken& cancel,
+                                                                               const Progress&) {
+            return std::make_shared<const report::CrossAnalysis>(
+                report::analyse(cross, options, cancel, previous.get()));
+        },
+        [this](std::uint64_t, const Private::Analysis& found) {
+            p_->analysis = found;
+            p_->pending = false;
+            Q_EMIT analysisChanged();
+        });
+}
+
+bool Workbook::analysing() const {
+    return p_->pending;
+}
+
+const report::CrossAnalysis& Workbook::analysis() const {
+    if (p_->analysis)
+        return *p_->analysis;
+    const book::Cross* cross = shownCross();
+    if (p_->pending) {
+        static const report::CrossAnalysis kNothingYet;
+        const bool fits = p_->previous && p_->previous->class_labels.size() == cross->classes.size();
+        return fits ? *p_->previous : kNothingYet;
+    }
+    p_->analysis = std::make_shared<const report::CrossAnalysis>(
+        cross != nullptr ? report::analyse(*cross, analysisOptions(), {}, p_->previous.get())
+                         : report::CrossAnalysis{});
     return *p_->analysis;
 }
 
@@ -202,12 +250,23 @@ double Workbook::alpha() const {
     return p_->alpha;
 }
 
+double Workbook::rememberedAlpha() {
+    const double alpha = QSettings().value(QStringLiteral("alpha"), kUsualAlpha).toDouble();
+    return alpha > 0.0 && alpha < 1.0 ? alpha : kUsualAlpha;
+}
+
+bool Workbook::rememberAlpha(double alpha) {
+    if (!(alpha > 0.0 && alpha < 1.0))
+        return false;
+    QSettings().setValue(QStringLiteral("alpha"), alpha);
+    return true;
+}
+
 void Workbook::setAlpha(double alpha) {
-    if (!(alpha > 0.0 && alpha < 1.0) || alpha == p_->alpha)
+    if (!rememberAlpha(alpha) || alpha == p_->alpha)
         return;
     p_->alpha = alpha;
-    QSettings().setValue(QStringLiteral("alpha"), alpha);
-    p_->analysis.reset();
+    outdateAnalysis();
     Q_EMIT analysisChanged();
 }
 

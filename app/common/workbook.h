@@ -49,24 +49,32 @@ public:
     /// The cross to show: preview where there is one, else the current cross.
     const book::Cross* shownCross() const;
     /// Analysis of `shownCross()` under the present selection and alpha; computed on demand, kept until something
-    /// changes.
+    /// changes. Of a cross with very many families it is worked out on another thread; until `analysisChanged` says
+    /// that it is there, this is what was there before.
     const report::CrossAnalysis& analysis() const;
+    bool analysing() const; ///< `analysis()` is still the former one
 
     double alpha() const;
     void setAlpha(double alpha);
+    /// The significance level kept between books; 0.05 where none was set.
+    static double rememberedAlpha();
+    static bool rememberAlpha(double alpha); ///< false, and nothing kept, unless it lies between 0 and 1
     bool readOnly() const;
 
 Q_SIGNALS:
     void bookChanged();  ///< anything in the book (also undo, redo, revert)
     void crossChanged(); ///< another cross is current
     void selectionChanged();
-    void analysisChanged(); ///< what `analysis()` gives is different now
+    void analysisChanged();      ///< what `analysis()` gives is different now
+    void busyChanged(bool busy); ///< an analysis takes so long that a person should see it
     void savedStateChanged();
     void said(const QString& sentence);    ///< status line: "Undid: F2-06, 34 → 31"
     void refused(const QString& sentence); ///< an edit or file action that failed, with its reason
 
 private:
     void afterChange();
+    void outdateAnalysis();
+    report::AnalysisOptions analysisOptions() const;
     void rememberPlace();
     bool tell(const Done& result, const QString& sentence);
     struct Private;

@@ -36,9 +36,19 @@ QString ClassHeader::term(std::size_t phenotype) const {
                : QString();
 }
 
-QStringList ClassHeader::labelLines(const QString& label, int width) const {
+bool ClassHeader::anyBreaks() const {
     const QFontMetrics metrics(app::font(TextRole::Label));
-    if (metrics.horizontalAdvance(label) <= width)
+    for (int column = 1; column <= static_cast<int>(families_->classCount()); ++column) {
+        const QString label = families_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
+        if (metrics.horizontalAdvance(label) > sectionSize(column) - kSwatch - 6 - kMargin)
+            return true;
+    }
+    return false;
+}
+
+QStringList ClassHeader::labelLines(const QString& label, int width, bool breaks) const {
+    const QFontMetrics metrics(app::font(TextRole::Label));
+    if (!breaks && metrics.horizontalAdvance(label) <= width)
         return {label};
     const qsizetype dot = label.indexOf(QStringLiteral("·"));
     if (dot < 0)
@@ -49,11 +59,12 @@ QStringList ClassHeader::labelLines(const QString& label, int width) const {
 
 QSize ClassHeader::sizeHint() const {
     int lines = 1;
+    const bool breaks = model() != nullptr && anyBreaks();
     const book::Cross* cross = model() != nullptr ? workbook_->shownCross() : nullptr;
     for (int column = 1; model() != nullptr && column <= static_cast<int>(families_->classCount()); ++column) {
         const QString label = families_->headerData(column, Qt::Horizontal, Qt::DisplayRole).toString();
         const int room = sectionSize(column) - kSwatch - 6 - kMargin;
-        lines = std::max(lines, static_cast<int>(labelLines(label, room).size()));
+        lines = std::max(lines, static_cast<int>(labelLines(label, room, breaks).size()));
     }
     const bool joined = cross != nullptr && !cross->hypothesis.joins.empty();
     return {QHeaderView::sizeHint().width(), (lines + 1) * kLine + 2 * space::kXs + (joined ? kBracket : 0)};
@@ -82,7 +93,7 @@ void ClassHeader::paintSection(QPainter* painter, const QRect& rect, int column)
         return;
     }
     const auto phenotype = static_cast<std::size_t>(column - 1);
-    const QStringList lines = labelLines(label, rect.width() - kMargin - kSwatch - 6);
+    const QStringList lines = labelLines(label, rect.width() - kMargin - kSwatch - 6, anyBreaks());
     int y = inside.bottom() + 1 - kLine * (static_cast<int>(lines.size()) + 1);
     const QFontMetrics metrics(painter->font());
     int widest = 0;

@@ -39,7 +39,8 @@ protected:
 
 private:
     QString term(std::size_t phenotype) const;
-    QStringList labelLines(const QString& label, int width) const;
+    bool anyBreaks() const; ///< one label is too wide: all break after the dot, for even rows
+    QStringList labelLines(const QString& label, int width, bool breaks) const;
     QRect joinRect(const std::vector<std::size_t>& join) const;
     void placeSplits();
 

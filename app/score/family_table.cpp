@@ -47,6 +47,13 @@ FamilyTable::FamilyTable(Workbook* workbook, FamilyModel* model, QWidget* parent
     connect(workbook_, &Workbook::analysisChanged, header_, &ClassHeader::refresh);
 }
 
+void FamilyTable::focusInEvent(QFocusEvent* event) {
+    // Who comes here by key can count at once: the first class of the first family.
+    if (!currentIndex().isValid() && model_->columnCount() > 1)
+        setCurrentIndex(model_->index(0, 1));
+    QTableView::focusInEvent(event);
+}
+
 void FamilyTable::showSownColumns(bool show) {
     sown_ = show;
     for (const ColumnKind kind : {ColumnKind::Sown, ColumnKind::Emerged, ColumnKind::Alive}) {

@@ -40,6 +40,7 @@ Q_SIGNALS:
     void joinRequested(const std::vector<std::size_t>& classes);
 
 protected:
+    void focusInEvent(QFocusEvent* event) override;
     void keyPressEvent(QKeyEvent* event) override;
     void paintEvent(QPaintEvent* event) override;
     void mouseDoubleClickEvent(QMouseEvent* event) override;

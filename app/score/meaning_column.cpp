@@ -114,10 +114,10 @@ void MeaningColumn::showAlternatives(const report::Alternatives& alternatives) {
     for (const report::AlsoNotContradicted& one : alternatives.not_contradicted) {
         ResultGrid::Row row;
         row.id = QStringLiteral("also-%1").arg(rows.size());
-        row.label = QString::fromStdString(one.notation);
+        row.label = QString::fromStdString(one.name.empty() ? one.notation : one.name);
+        row.label_tip = QString::fromStdString(one.notation);
         row.p = tr("P %1").arg(pText(one.p));
         row.p_tip = fullText(one.p);
-        row.statistic_tip = QString::fromStdString(one.name);
         rows.push_back(row);
     }
     also_rows_->setRows(rows);

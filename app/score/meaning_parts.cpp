@@ -94,7 +94,7 @@ void MeaningColumn::refreshFit(const report::CrossAnalysis& analysis) {
         rows.push_back(row);
     }
     tests_->setRows(rows);
-    meaning_->say(say(fit.meaning));
+    meaning_->say(say(fit.meaning) + QLatin1Char(' ') + tr("Tested at α = %1.").arg(QString::number(fit.input.alpha)));
 }
 
 void MeaningColumn::refreshFamilies(const report::CrossAnalysis& analysis) {

@@ -98,6 +98,7 @@ void ScorePane::build() {
          std::initializer_list<QPushButton*>{sown_, paste_, join_, with_, show_map_, show_chart_, as_table_})
         button->setFocusPolicy(Qt::TabFocus);
     panel_->hide();
+    setFocusProxy(table_);
 }
 
 void ScorePane::wire() {

@@ -68,7 +68,7 @@ void ResultGrid::setRows(const std::vector<Row>& rows) {
         const QString names[] = {row.id, row.id + QStringLiteral("-statistic"), row.id + QStringLiteral("-df"),
                                  row.id + QStringLiteral("-p")};
         const QString texts[] = {row.label, row.statistic, row.df, row.p};
-        const QString tips[] = {{}, row.statistic_tip, {}, row.p_tip};
+        const QString tips[] = {row.label_tip, row.statistic_tip, {}, row.p_tip};
         int cell = 0;
         for (Words* words : {one.label, one.statistic, one.df, one.p}) {
             if (words->objectName() != names[cell])

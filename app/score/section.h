@@ -22,6 +22,7 @@ public:
         QString label;
         QString statistic, df, p;
         QString statistic_tip, p_tip;
+        QString label_tip = {};
         bool strong = false;
         bool muted = false;
         bool warn = false;

@@ -2,6 +2,7 @@
 #include "app/shell/book_view.h"
 
 #include <QApplication>
+#include <QGraphicsOpacityEffect>
 #include <QLabel>
 #include <QListView>
 #include <QPushButton>
@@ -20,6 +21,7 @@
 namespace filial::app {
 namespace {
 
+constexpr double kMuted = 0.5;
 constexpr int kRailFrom = 1120;  // narrower: the outline is a rail
 constexpr int kDrawerFrom = 900; // narrower: the right column is a drawer
 constexpr int kRail = 48, kLeft = 212, kLeftMin = 168, kLeftMax = 320;
@@ -65,6 +67,12 @@ BookView::BookView(Workbook* workbook, QWidget* parent)
     connect(details_, &CrossDetails::left, this, &BookView::leaveDetails);
     connect(workbook_, &Workbook::bookChanged, this, &BookView::followCross);
     connect(workbook_, &Workbook::crossChanged, this, &BookView::followCross);
+    // What is being worked out anew stays on the screen, muted.
+    auto* muted = new QGraphicsOpacityEffect(right_);
+    muted->setOpacity(kMuted);
+    muted->setEnabled(false);
+    right_->setGraphicsEffect(muted);
+    connect(workbook_, &Workbook::busyChanged, muted, &QGraphicsEffect::setEnabled);
     showDesk(0);
 }
 

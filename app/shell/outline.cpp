@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/shell/outline.h"
 
+#include <algorithm>
+
 #include <QAction>
 #include <QContextMenuEvent>
 #include <QLabel>
@@ -18,7 +20,8 @@
 namespace filial::app {
 namespace {
 
-constexpr int kRow = 32;
+constexpr int kCrossRow = 32, kRailRow = 44;
+constexpr int kListStretch = 1000; // the list takes what room it needs, the space below the rest
 
 class CrossDelegate : public QStyledItemDelegate {
 public:
@@ -26,7 +29,7 @@ public:
     bool rail = false;
 
     QSize sizeHint(const QStyleOptionViewItem& /*option*/, const QModelIndex& /*index*/) const override {
-        return {48, rail ? 44 : kRow};
+        return {48, rail ? kRailRow : kCrossRow};
     }
 
     void paint(QPainter* painter, const QStyleOptionViewItem& option, const QModelIndex& index) const override {
@@ -145,13 +148,14 @@ Outline::Outline(Workbook* workbook, QWidget* parent)
     fresh_->setToolTip(tr("Add a cross to this book"));
     details_->setToolTip(tr("Name, generation, parents, dates and notes of the chosen cross (F2)"));
     column->addWidget(heading_);
-    column->addWidget(list_, 1);
+    column->addWidget(list_, kListStretch);
     auto* row = new QBoxLayout(QBoxLayout::TopToBottom);
     row->setContentsMargins(space::kXs, space::kS, space::kXs, 0);
     row->setSpacing(space::kXs);
-    row->addWidget(fresh_);
-    row->addWidget(details_);
+    row->addWidget(fresh_, 0, Qt::AlignLeft);
+    row->addWidget(details_, 0, Qt::AlignLeft);
     column->addLayout(row);
+    column->addStretch(1);
     connect(fresh_, &QPushButton::clicked, this, &Outline::newCrossWanted);
     connect(details_, &QPushButton::clicked, this, &Outline::detailsWanted);
     connect(list_->selectionModel(), &QItemSelectionModel::currentChanged, this, [this](const QModelIndex& now) {
@@ -173,11 +177,19 @@ void Outline::chooseCurrent() {
         if (crosses[i].id == workbook_->currentCrossId())
             list_->setCurrentIndex(crosses_->index(static_cast<int>(i)));
     details_->setVisible(!crosses.empty());
+    fitList();
     list_->viewport()->update();
+}
+
+void Outline::fitList() {
+    const int row = static_cast<CrossDelegate*>(list_->itemDelegate())->rail ? kRailRow : kCrossRow;
+    list_->setMinimumHeight(row);
+    list_->setMaximumHeight(std::max(1, crosses_->rowCount()) * row);
 }
 
 void Outline::setRail(bool rail) {
     static_cast<CrossDelegate*>(list_->itemDelegate())->rail = rail;
+    fitList();
     heading_->setVisible(!rail);
     fresh_->setText(rail ? QStringLiteral("+") : tr("New cross…"));
     fresh_->setAccessibleName(rail ? tr("+ New cross…") : QString());

@@ -46,6 +46,7 @@ protected:
 
 private:
     void chooseCurrent();
+    void fitList(); ///< as high as its rows: what is to be done next stands right below
     Workbook* workbook_;
     CrossList* crosses_;
     QLabel* heading_;

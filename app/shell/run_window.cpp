@@ -6,6 +6,7 @@
 
 #include <QApplication>
 #include <QIcon>
+#include <QThreadPool>
 
 #include "app/common/focus_ring.h"
 #include "app/common/version.h"
@@ -14,6 +15,7 @@
 #include "app/shell/help_panel.h"
 #include "app/shell/theme_choice.h"
 #include "app/shell/window.h"
+#include "core/inheritance/catalogue.h"
 
 namespace filial::app {
 namespace {
@@ -53,6 +55,8 @@ int run_window(int argc, char** argv) {
         std::fputs("filial: the window opens one book; name one, or none\n", stderr);
         return kWrongArguments;
     }
+    // The catalogue derives its ratios once; by the time somebody asks for it, it is there.
+    QThreadPool::globalInstance()->start([] { (void)inheritance::catalogue(); });
     Window window;
     if (arguments.size() == 2)
         window.openPath(arguments[1]);

@@ -20,6 +20,7 @@
 #include "app/shell/book_view.h"
 #include "app/shell/help_panel.h"
 #include "app/shell/new_cross_page.h"
+#include "app/shell/settings_page.h"
 #include "app/shell/start_page.h"
 #include "app/shell/top_bar.h"
 
@@ -44,7 +45,7 @@ protected:
 
 Window::Window(QWidget* parent)
     : QWidget(parent), menu_(new QMenu(this)), notice_(new NoticeBar), pages_(new QStackedWidget),
-      start_(new StartPage), questions_(new NewCrossPage) {
+      start_(new StartPage), questions_(new NewCrossPage), settings_(new SettingsPage) {
     bar_ = new TopBar(menu_);
     auto* box = new QVBoxLayout(this);
     box->setContentsMargins(0, 0, 0, 0);
@@ -55,6 +56,7 @@ Window::Window(QWidget* parent)
     box->addWidget(makeStatusLine());
     pages_->addWidget(start_);
     pages_->addWidget(questions_);
+    pages_->addWidget(settings_);
     setAcceptDrops(true);
     setMinimumSize(620, 480);
     connect(start_, &StartPage::newCrossWanted, this, &Window::newCross);
@@ -63,10 +65,8 @@ Window::Window(QWidget* parent)
     connect(start_, &StartPage::recentChosen, this, &Window::openPath);
     connect(start_, &StartPage::recoverChosen, this, &Window::recover);
     connect(questions_, &NewCrossPage::answered, this, &Window::finishNewCross);
-    connect(questions_, &NewCrossPage::cancelled, this, [this] {
-        pages_->setCurrentWidget(view_ != nullptr ? static_cast<QWidget*>(view_) : start_);
-        followSavedState();
-    });
+    connect(questions_, &NewCrossPage::cancelled, this, &Window::backToBook);
+    connect(settings_, &SettingsPage::left, this, &Window::backToBook);
     connect(bar_, &TopBar::reportWanted, this, &Window::writeReport);
     connect(bar_, &TopBar::deskChosen, this, [this](int index) {
         if (view_ != nullptr)
@@ -214,6 +214,19 @@ void Window::watchJournal() {
 void Window::newCross() {
     questions_->begin();
     pages_->setCurrentWidget(questions_);
+}
+
+void Window::settings() {
+    settings_->begin(workbook_.get());
+    pages_->setCurrentWidget(settings_);
+    settings_->setFocus(Qt::TabFocusReason);
+}
+
+void Window::backToBook() {
+    pages_->setCurrentWidget(view_ != nullptr ? static_cast<QWidget*>(view_) : start_);
+    if (view_ != nullptr)
+        view_->desk()->middle()->setFocus();
+    followSavedState();
 }
 
 void Window::closeEvent(QCloseEvent* event) {

@@ -20,6 +20,7 @@ namespace filial::app {
 class BookView;
 class HelpPanel;
 class NewCrossPage;
+class SettingsPage;
 class StartPage;
 class TopBar;
 class Workbook;
@@ -40,12 +41,14 @@ public:
     bool save();
     bool saveAs();
     bool closeBook(); ///< back to the start page; false where the person stays
+    void settings();  ///< who counts, and the significance level
     void writeReport();
     void copyTable();
 
     Workbook* workbook() const { return workbook_.get(); }
     BookView* view() const { return view_; }
     StartPage* startPage() const { return start_; }
+    SettingsPage* settingsPage() const { return settings_; }
     NewCrossPage* newCrossPage() const { return questions_; }
     QString savedState() const;
     QString statusText() const;
@@ -63,6 +66,7 @@ private:
     bool importTable(const QString& path);
     bool mayLeave(); ///< asks what to do with unsaved changes
     void finishNewCross();
+    void backToBook(); ///< from a page of questions
     void open();
     void tellOpened();
     void watchJournal();
@@ -89,6 +93,7 @@ private:
     QStackedWidget* pages_;
     StartPage* start_;
     NewCrossPage* questions_;
+    SettingsPage* settings_;
     QLabel* status_ = nullptr;
     QLabel* place_ = nullptr;
     std::unique_ptr<Workbook> workbook_;

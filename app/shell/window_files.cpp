@@ -2,15 +2,14 @@
 // How books come into the window and leave it.
 #include <QClipboard>
 #include <QDate>
-#include <QDesktopServices>
 #include <QDir>
 #include <QFile>
 #include <QFileInfo>
 #include <QGuiApplication>
 #include <QSaveFile>
 #include <QStackedWidget>
-#include <QUrl>
 
+#include "app/charts/chart_adapter.h"
 #include "app/common/ask.h"
 #include "app/common/text.h"
 #include "app/common/version.h"
@@ -52,6 +51,7 @@ report::Provenance provenanceOf(Workbook& workbook) {
         book::sha256_hex(asSaved ? file.readAll().toStdString() : book::write_book(workbook.book()));
     provenance.command = "filial report \"" + provenance.input_name + "\" --select \"" + workbook.currentCross()->name +
                          "\" --out report.html";
+    provenance.parents = report::parent_names(workbook.book(), *workbook.currentCross());
     provenance.date = QDate::currentDate().toString(Qt::ISODate).toStdString();
     return provenance;
 }
@@ -224,6 +224,10 @@ bool Window::closeBook() {
 void Window::writeReport() {
     if (workbook_ == nullptr || workbook_->currentCross() == nullptr)
         return;
+    if (workbook_->analysing()) {
+        say(tr("The results of this cross are still being worked out."));
+        return;
+    }
     const QString suggestion = QString::fromStdString(workbook_->currentCross()->name) + QStringLiteral(".html");
     const QString path = withEnding(
         Ask::instance().saveFile(this, tr("Write the report to"), suggestion, tr("Pages (*.html)")), ".html");
@@ -232,7 +236,7 @@ void Window::writeReport() {
     const report::Document document =
         report::cross_report(*workbook_->currentCross(), workbook_->analysis(), provenanceOf(*workbook_));
     QSaveFile file(path);
-    const std::string page = report::write_html(document);
+    const std::string page = report::write_html(document, {&chartSvg});
     if (!file.open(QIODevice::WriteOnly) ||
         file.write(page.data(), static_cast<qint64>(page.size())) != static_cast<qint64>(page.size()) ||
         !file.commit()) {
@@ -240,8 +244,7 @@ void Window::writeReport() {
         return;
     }
     say(tr("Report written to %1").arg(QDir::toNativeSeparators(path)));
-    if (QGuiApplication::platformName() != QLatin1String("offscreen"))
-        QDesktopServices::openUrl(QUrl::fromLocalFile(path));
+    Ask::instance().showFile(path);
 }
 
 void Window::copyTable() {

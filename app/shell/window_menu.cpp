@@ -131,6 +131,7 @@ void Window::makeViewMenu() {
 }
 
 void Window::makeHelpMenu() {
+    act(menu_, tr("Settings…"), QKeySequence(Qt::CTRL | Qt::Key_Comma), &Window::settings);
     menu_->addSeparator();
     act(menu_, tr("Help on this"), QKeySequence(Qt::Key_F1), &Window::help);
     QAction* about = menu_->addAction(tr("About Filial"));

@@ -52,6 +52,9 @@ std::optional<double> p_of(const Hypothesis& hypothesis, const fit::GoodnessOfFi
 } // namespace
 
 Alternatives also_not_contradicted(const CrossAnalysis& analysis, std::size_t most) {
+    const bool chosen_after_seeing = std::any_of(analysis.notes.begin(), analysis.notes.end(), [](const Message& note) {
+        return note.id == MessageId::NoteChosenAfterSeeing;
+    });
     Alternatives result;
     if (!analysis.totals.has_value())
         return result;
@@ -79,7 +82,8 @@ Alternatives also_not_contradicted(const CrossAnalysis& analysis, std::size_t mo
         result.notes.push_back(
             {MessageId::AlternativesTried,
              {count(tried.size()), count(stated.class_count()), count(result.not_contradicted.size())}});
-        result.notes.push_back({MessageId::AlternativesConfirm, {count(result.tried)}});
+        if (chosen_after_seeing)
+            result.notes.push_back({MessageId::AlternativesConfirm, {count(result.tried)}});
     }
     if (result.not_contradicted.size() > most)
         result.not_contradicted.resize(most);

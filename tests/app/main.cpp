@@ -6,6 +6,7 @@
 #include <QSettings>
 #include <QStandardPaths>
 #include <QTemporaryDir>
+#include <QTimer>
 
 #include "app/common/focus_ring.h"
 #include "app/common/theme.h"
@@ -27,5 +28,7 @@ int main(int argc, char** argv) {
     QAccessible::setActive(true);
     filial::app::Theme::instance().apply(filial::app::ThemeName::Light);
     const filial::app::FocusRing ring(nullptr);
-    return RUN_ALL_TESTS();
+    // Inside the event loop, as the program runs: before it, Qt tells no widget of a change of palette.
+    QTimer::singleShot(0, &application, [] { QCoreApplication::exit(RUN_ALL_TESTS()); });
+    return QApplication::exec();
 }

@@ -25,7 +25,7 @@ namespace filial::app {
 class AnsweringAsk : public Ask {
 public:
     struct Answers {
-        QString open, save;
+        QString open, save, shown;
         int choice = -1;
         int asked = 0;
     };
@@ -36,6 +36,7 @@ public:
         ++answers_.asked;
         return answers_.choice;
     }
+    void showFile(const QString& path) override { answers_.shown = path; }
 
 private:
     Answers& answers_;

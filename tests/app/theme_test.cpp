@@ -62,6 +62,7 @@ TEST_F(ThemeSwitch, LeavesNoColourOfTheFormerThemeBehind) {
     const QImage light = window.grab().toImage();
     for (const ThemeName name : {ThemeName::Dark, ThemeName::DimRed, ThemeName::Light}) {
         Theme::instance().apply(name);
+        QCoreApplication::processEvents();
         const QImage image = window.grab().toImage();
         const Tokens t = Theme::read(name);
         EXPECT_EQ(image.pixelColor(1, 1), t.background);

@@ -390,5 +390,22 @@ TEST(CrossAnalysis, NotesAHypothesisChosenAfterSeeing) {
     EXPECT_TRUE(says(analyse(cross, {}).notes, MessageId::NoteChosenAfterSeeing));
 }
 
+TEST(CrossAnalysis, AlternativesAreNamedAndWarnedOfOnlyWhereTheRatioWasChosenAfterTheCounts) {
+    book::Cross cross;
+    cross.traits = {{"flower", {{"coloured", ""}, {"white", ""}}}};
+    cross.classes = book::product_classes(cross.traits);
+    cross.hypothesis.notation = "1:1";
+    cross.families = {family("F2-01", {90, 70})}; // 9:7 to the plant: chi-square 0, P 1
+    const Alternatives before = also_not_contradicted(analyse(cross, {}));
+    ASSERT_FALSE(before.not_contradicted.empty());
+    EXPECT_EQ(before.not_contradicted[0].notation, "9:7");
+    EXPECT_FALSE(before.not_contradicted[0].name.empty());
+    EXPECT_EQ(before.not_contradicted[0].p, 1.0);
+    EXPECT_TRUE(says(before.notes, MessageId::AlternativesTried));
+    EXPECT_FALSE(says(before.notes, MessageId::AlternativesConfirm));
+    cross.hypothesis.chosen_after_seeing = true;
+    EXPECT_TRUE(says(also_not_contradicted(analyse(cross, {})).notes, MessageId::AlternativesConfirm));
+}
+
 } // namespace
 } // namespace filial::report
