@@ -73,6 +73,7 @@ protected:
         window_->resize(1148, 812);
         window_->show();
         window_->activateWindow();
+        ASSERT_TRUE(QTest::qWaitForWindowActive(window_.get())); // a window manager gives the keys in its own time
         table_ = window_->findChild<QTableView*>("family-table");
         ASSERT_NE(table_, nullptr);
         tester_ = std::make_unique<QAbstractItemModelTester>(table_->model(),
