@@ -10,6 +10,7 @@
 #include <sstream>
 
 #include <QAccessible>
+#include <QApplication>
 #include <QDir>
 #include <QFile>
 #include <QLabel>
