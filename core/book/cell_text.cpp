@@ -9,7 +9,7 @@ namespace filial::book {
 
 namespace {
 
-Error wrong(MessageId id, std::string_view found, std::size_t place) {
+Error wrong_cell(MessageId id, std::string_view found, std::size_t place) {
     return Error{ErrorKind::Input, Message{id, {text_argument(std::string(found))}}, place};
 }
 
@@ -101,18 +101,18 @@ std::optional<std::string> digits_only(std::string_view text) {
 
 Result<Count> read_term(std::string_view term, std::size_t place) {
     if (negative(term))
-        return wrong(MessageId::CountNegative, term, place);
+        return wrong_cell(MessageId::CountNegative, term, place);
     const auto digits = digits_only(term);
     if (!digits) {
         if (in_exponent_form(term))
-            return wrong(beyond_range(term) ? MessageId::CountTooLarge : MessageId::CountNotANumber, term, place);
-        return wrong(fractional(term) ? MessageId::CountNotWhole : MessageId::CountNotANumber, term, place);
+            return wrong_cell(beyond_range(term) ? MessageId::CountTooLarge : MessageId::CountNotANumber, term, place);
+        return wrong_cell(fractional(term) ? MessageId::CountNotWhole : MessageId::CountNotANumber, term, place);
     }
     std::int64_t value = 0;
     for (const char c : *digits) {
         value = value * 10 + (c - '0');
         if (value > Count::kLargestTyped)
-            return wrong(MessageId::CountTooLarge, term, place);
+            return wrong_cell(MessageId::CountTooLarge, term, place);
     }
     return Count(value);
 }
@@ -135,10 +135,10 @@ Result<Cell> read_cell(std::string_view text) {
         Result<Count> read = read_term(term, place);
         if (!read) {
             // An empty term has nothing to show: the whole text was found.
-            return term.empty() ? wrong(MessageId::CountNotANumber, whole, place) : read.error();
+            return term.empty() ? wrong_cell(MessageId::CountNotANumber, whole, place) : read.error();
         }
         if (sum.value() + read.value().value() > Count::kLargestTyped)
-            return wrong(MessageId::CountTooLarge, whole, 0);
+            return wrong_cell(MessageId::CountTooLarge, whole, 0);
         sum += read.value();
         begin = end + 1;
     }

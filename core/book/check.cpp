@@ -10,17 +10,9 @@ namespace filial::book {
 
 namespace {
 
-Error wrong(MessageId id, std::vector<Argument> arguments) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, std::nullopt};
-}
-
-Argument size_argument(std::size_t size) {
-    return count_argument(static_cast<std::int64_t>(size));
-}
-
 Done check_number(Count count, const std::string& path) {
     if (count.value() > Count::kLargestTyped)
-        return wrong(MessageId::FieldNotCount, {text_argument(path), text_argument(std::to_string(count.value()))});
+        return refusal(MessageId::FieldNotCount, {text_argument(path), text_argument(std::to_string(count.value()))});
     return done();
 }
 
@@ -29,14 +21,14 @@ Done check_classes(const Cross& cross, const std::string& path) {
         const std::vector<int>& levels = cross.classes[i].levels;
         const auto place = [&] { return indexed(path + "classes", i) + ".levels"; };
         if (levels.size() != cross.traits.size())
-            return wrong(MessageId::FieldWrongLength,
-                         {text_argument(place()), size_argument(levels.size()), size_argument(cross.traits.size())});
+            return refusal(MessageId::FieldWrongLength,
+                           {text_argument(place()), size_argument(levels.size()), size_argument(cross.traits.size())});
         for (std::size_t trait = 0; trait < levels.size(); ++trait) {
             const auto most = static_cast<std::int64_t>(cross.traits[trait].levels.size()) - 1;
             if (levels[trait] < -1 || levels[trait] > most)
-                return wrong(MessageId::FieldNotIndex,
-                             {text_argument(indexed(place(), trait)), text_argument(std::to_string(levels[trait])),
-                              count_argument(-1), count_argument(most)});
+                return refusal(MessageId::FieldNotIndex,
+                               {text_argument(indexed(place(), trait)), text_argument(std::to_string(levels[trait])),
+                                count_argument(-1), count_argument(most)});
         }
     }
     return done();
@@ -47,11 +39,11 @@ Done check_indices(const std::vector<std::size_t>& indices, std::size_t limit, s
                    const std::string& path) {
     for (std::size_t i = 0; i < indices.size(); ++i) {
         if (indices[i] >= limit)
-            return wrong(MessageId::FieldNotIndex,
-                         {text_argument(indexed(path, i)), text_argument(std::to_string(indices[i])), count_argument(0),
-                          count_argument(static_cast<std::int64_t>(limit) - 1)});
+            return refusal(MessageId::FieldNotIndex,
+                           {text_argument(indexed(path, i)), text_argument(std::to_string(indices[i])),
+                            count_argument(0), count_argument(static_cast<std::int64_t>(limit) - 1)});
         if (!seen.insert(indices[i]).second)
-            return wrong(MessageId::FieldIndexTwice, {text_argument(indexed(path, i)), size_argument(indices[i])});
+            return refusal(MessageId::FieldIndexTwice, {text_argument(indexed(path, i)), size_argument(indices[i])});
     }
     return done();
 }
@@ -59,8 +51,8 @@ Done check_indices(const std::vector<std::size_t>& indices, std::size_t limit, s
 Done check_hypothesis(const Cross& cross, const std::string& path) {
     const HypothesisUse& use = cross.hypothesis;
     if (!use.binding.empty() && use.binding.size() != cross.classes.size())
-        return wrong(MessageId::FieldWrongLength, {text_argument(path + "binding"), size_argument(use.binding.size()),
-                                                   size_argument(cross.classes.size())});
+        return refusal(MessageId::FieldWrongLength, {text_argument(path + "binding"), size_argument(use.binding.size()),
+                                                     size_argument(cross.classes.size())});
     std::unordered_set<std::size_t> bound;
     if (Done sound =
             check_indices(use.binding, std::max(ratio::kMostTerms, cross.classes.size()), bound, path + "binding");
@@ -71,8 +63,8 @@ Done check_hypothesis(const Cross& cross, const std::string& path) {
         if (Done sound = check_indices(use.joins[i], cross.classes.size(), joined, indexed(path + "joins", i)); !sound)
             return sound;
     if (use.fitted_elsewhere < 0)
-        return wrong(MessageId::FieldNotCount,
-                     {text_argument(path + "fitted_elsewhere"), text_argument(std::to_string(use.fitted_elsewhere))});
+        return refusal(MessageId::FieldNotCount,
+                       {text_argument(path + "fitted_elsewhere"), text_argument(std::to_string(use.fitted_elsewhere))});
     return done();
 }
 
@@ -89,9 +81,9 @@ public:
 private:
     Done add(const Id& id, const std::string& path, std::size_t index) {
         if (!id_sound(id))
-            return wrong(MessageId::FieldNotId, {text_argument(indexed(path, index) + ".id"), text_argument(id)});
+            return refusal(MessageId::FieldNotId, {text_argument(indexed(path, index) + ".id"), text_argument(id)});
         if (!seen_.insert(id).second)
-            return wrong(MessageId::FieldIdTwice, {text_argument(indexed(path, index) + ".id"), text_argument(id)});
+            return refusal(MessageId::FieldIdTwice, {text_argument(indexed(path, index) + ".id"), text_argument(id)});
         return done();
     }
     std::unordered_set<std::string_view> seen_;
@@ -99,7 +91,7 @@ private:
 
 Done check_ids(const Book& book) {
     if (!id_sound(book.id))
-        return wrong(MessageId::FieldNotId, {text_argument("id"), text_argument(book.id)});
+        return refusal(MessageId::FieldNotId, {text_argument("id"), text_argument(book.id)});
     Ids ids;
     if (Done sound = ids.add(book.lines, "lines"); !sound)
         return sound;
@@ -141,24 +133,25 @@ bool id_taken(const Book& book, const Id& id) {
 
 Done check_cell(const Cell& cell, const std::string& path) {
     if (cell.state != CellState::Number && cell.count != Count{})
-        return wrong(MessageId::FieldNotCell, {text_argument(path), text_argument(std::to_string(cell.count.value()))});
+        return refusal(MessageId::FieldNotCell,
+                       {text_argument(path), text_argument(std::to_string(cell.count.value()))});
     return check_number(cell.count, path);
 }
 
 Done check_plant(const Plant& plant, std::size_t class_count, const std::string& path) {
     if (plant.phenotype && plant.phenotype->value >= class_count)
-        return wrong(MessageId::FieldNotIndex,
-                     {text_argument(path + ".class"), text_argument(std::to_string(plant.phenotype->value)),
-                      count_argument(0), count_argument(static_cast<std::int64_t>(class_count) - 1)});
+        return refusal(MessageId::FieldNotIndex,
+                       {text_argument(path + ".class"), text_argument(std::to_string(plant.phenotype->value)),
+                        count_argument(0), count_argument(static_cast<std::int64_t>(class_count) - 1)});
     if (plant.place && (plant.place->tray < 0 || plant.place->row < 0 || plant.place->column < 0))
-        return wrong(MessageId::FieldNotCount, {text_argument(path + ".place"), text_argument("-")});
+        return refusal(MessageId::FieldNotCount, {text_argument(path + ".place"), text_argument("-")});
     return done();
 }
 
 Done check_family(const Family& family, std::size_t class_count, const std::string& path) {
     if (family.typed.size() != class_count)
-        return wrong(MessageId::FieldWrongLength,
-                     {text_argument(path + ".typed"), size_argument(family.typed.size()), size_argument(class_count)});
+        return refusal(MessageId::FieldWrongLength, {text_argument(path + ".typed"), size_argument(family.typed.size()),
+                                                     size_argument(class_count)});
     const auto sound = [](const Cell& cell) {
         return cell.count.value() <= Count::kLargestTyped && (cell.state == CellState::Number || cell.count == Count{});
     };
@@ -195,8 +188,8 @@ Done check_parents(const Book& book, const Cross& cross, const std::string& path
     for (std::size_t i = 0; i < cross.parents.size(); ++i)
         if (std::none_of(book.lines.begin(), book.lines.end(),
                          [&](const Line& line) { return line.id == cross.parents[i]; }))
-            return wrong(MessageId::FieldParentMissing,
-                         {text_argument(indexed(path + ".parents", i)), text_argument(cross.parents[i])});
+            return refusal(MessageId::FieldParentMissing,
+                           {text_argument(indexed(path + ".parents", i)), text_argument(cross.parents[i])});
     return done();
 }
 

@@ -18,14 +18,6 @@ struct NumberedRow {
     Row cells;
 };
 
-Argument size_argument(std::size_t size) {
-    return count_argument(static_cast<std::int64_t>(size));
-}
-
-Error wrong(MessageId id, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, std::nullopt};
-}
-
 /// Bytes of the character that begins here, 0 where it is not UTF-8 (overlong forms and surrogates included) or NUL.
 std::size_t character(std::string_view text) {
     const auto byte = [&](std::size_t i) { return static_cast<unsigned char>(text[i]); };
@@ -54,7 +46,7 @@ Done check_text(std::string_view text) {
     for (std::size_t at = 0; at < text.size();) {
         const std::size_t bytes = character(text.substr(at));
         if (bytes == 0)
-            return wrong(MessageId::TableNotText, {size_argument(line), size_argument(column)});
+            return refusal(MessageId::TableNotText, {size_argument(line), size_argument(column)});
         ++column;
         if (text[at] == '\n') {
             ++line;
@@ -132,7 +124,7 @@ Result<std::vector<NumberedRow>> read_rows(const std::string& text) {
     const bool whole = read == text.size() && csv_fini(&parser, field_ended, row_ended, &collector) == 0;
     csv_free(&parser);
     if (!whole)
-        return wrong(MessageId::TableQuote, {size_argument(collector.line)});
+        return refusal(MessageId::TableQuote, {size_argument(collector.line)});
     return std::move(collector.rows);
 }
 
@@ -167,10 +159,10 @@ Result<Header> read_header(NumberedRow row) {
     for (std::size_t i = 1; i < row.cells.size(); ++i) {
         const std::string& name = row.cells[i];
         if (name.empty())
-            return wrong(MessageId::TableColumnUnnamed, {size_argument(row.line), size_argument(i + 1)});
+            return refusal(MessageId::TableColumnUnnamed, {size_argument(row.line), size_argument(i + 1)});
         if (!seen.insert(name).second)
-            return wrong(MessageId::TableColumnTwice,
-                         {size_argument(row.line), size_argument(i + 1), text_argument(name)});
+            return refusal(MessageId::TableColumnTwice,
+                           {size_argument(row.line), size_argument(i + 1), text_argument(name)});
         all_counts = all_counts && read_cell(name).ok();
         header.names.push_back(name);
         header.kinds.push_back(kind_of(name));
@@ -178,15 +170,15 @@ Result<Header> read_header(NumberedRow row) {
             header.class_labels.push_back(name);
     }
     if (all_counts)
-        return wrong(MessageId::TableNoHeader, {size_argument(row.line)});
+        return refusal(MessageId::TableNoHeader, {size_argument(row.line)});
     if (header.class_labels.empty())
-        return wrong(MessageId::TableNoClasses, {size_argument(row.line)});
+        return refusal(MessageId::TableNoClasses, {size_argument(row.line)});
     // Two columns of one kind, written differently ("Sown", "sown").
     for (std::size_t i = 0; i < header.kinds.size(); ++i)
         if (header.kinds[i] != Column::Class &&
             std::count(header.kinds.begin(), header.kinds.end(), header.kinds[i]) > 1)
-            return wrong(MessageId::TableColumnTwice,
-                         {size_argument(row.line), size_argument(i + 2), text_argument(header.names[i])});
+            return refusal(MessageId::TableColumnTwice,
+                           {size_argument(row.line), size_argument(i + 2), text_argument(header.names[i])});
     return header;
 }
 
@@ -222,10 +214,10 @@ Result<Family> read_family_row(const Header& header, const NumberedRow& row) {
     while (used > header.kinds.size() + 1 && row.cells[used - 1].empty())
         --used;
     if (used != header.kinds.size() + 1)
-        return wrong(MessageId::TableRagged,
-                     {size_argument(row.line), size_argument(used), size_argument(header.kinds.size() + 1)});
+        return refusal(MessageId::TableRagged,
+                       {size_argument(row.line), size_argument(used), size_argument(header.kinds.size() + 1)});
     if (row.cells.front().empty())
-        return wrong(MessageId::TableFamilyUnnamed, {size_argument(row.line)});
+        return refusal(MessageId::TableFamilyUnnamed, {size_argument(row.line)});
     Family family = new_family(row.cells.front(), 0);
     for (std::size_t i = 0; i < header.kinds.size(); ++i) {
         const std::string& text = row.cells[i + 1];
@@ -239,7 +231,7 @@ Result<Family> read_family_row(const Header& header, const NumberedRow& row) {
                                             text_argument(header.names[i])};
             const auto& found = cell.error().message.arguments;
             arguments.insert(arguments.end(), found.begin(), found.end());
-            return wrong(in_table(cell.error().message.id), std::move(arguments));
+            return refusal(in_table(cell.error().message.id), std::move(arguments));
         }
         put(family, header.kinds[i], cell.value());
     }
@@ -258,7 +250,7 @@ Result<CountTable> read_count_table(std::string_view text) {
     if (!rows)
         return rows.error();
     if (rows.value().empty())
-        return wrong(MessageId::TableEmpty);
+        return refusal(MessageId::TableEmpty);
     Result<Header> header = read_header(std::move(rows.value().front()));
     if (!header)
         return header.error();
@@ -270,11 +262,11 @@ Result<CountTable> read_count_table(std::string_view text) {
         if (!family)
             return family.error();
         if (!labels.insert(family.value().label).second)
-            return wrong(MessageId::TableFamilyTwice, {size_argument(row.line), text_argument(family.value().label)});
+            return refusal(MessageId::TableFamilyTwice, {size_argument(row.line), text_argument(family.value().label)});
         table.families.push_back(std::move(family).value());
     }
     if (table.families.empty())
-        return wrong(MessageId::TableNoFamilies);
+        return refusal(MessageId::TableNoFamilies);
     return table;
 }
 

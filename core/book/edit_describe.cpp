@@ -12,10 +12,6 @@ Message say(MessageId id, std::vector<Argument> arguments = {}) {
     return Message{id, std::move(arguments)};
 }
 
-Argument size_argument(std::size_t size) {
-    return count_argument(static_cast<std::int64_t>(size));
-}
-
 struct Describer {
     const Book& book;
 

@@ -30,10 +30,6 @@ LineColumn locate(std::string_view text, std::size_t byte) {
     return at;
 }
 
-Error wrong(MessageId id, std::vector<Argument> arguments) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, std::nullopt};
-}
-
 /// Builds the value event by event, so that a hostile text is stopped before it costs memory or hides a key.
 class Builder : public nlohmann::json_sax<Json> {
 public:
@@ -54,15 +50,15 @@ public:
         auto [slot, fresh] = open_.back()->get_ref<Json::object_t&>().try_emplace(value);
         slot_ = &slot->second;
         if (!fresh)
-            error_ = wrong(MessageId::JsonKeyTwice, {text_argument(value)});
+            error_ = refusal(MessageId::JsonKeyTwice, {text_argument(value)});
         return fresh;
     }
     bool parse_error(std::size_t byte, const std::string& /*token*/, const Json::exception& /*why*/) override {
         const std::size_t place = byte > 0 ? byte - 1 : 0;
         const LineColumn at = locate(text_, place);
         const bool ended = text_.find_last_not_of(" \t\r\n") == std::string_view::npos || byte > text_.size();
-        error_ = wrong(ended ? MessageId::JsonEndsEarly : MessageId::JsonMalformed,
-                       {count_argument(at.line), count_argument(at.column)});
+        error_ = refusal(ended ? MessageId::JsonEndsEarly : MessageId::JsonMalformed,
+                         {count_argument(at.line), count_argument(at.column)});
         error_->place = std::min(place, text_.size());
         return false;
     }
@@ -74,7 +70,7 @@ private:
     bool counted() {
         if (++values_ <= kMostValues)
             return true;
-        error_ = wrong(MessageId::JsonTooManyValues, {count_argument(static_cast<std::int64_t>(kMostValues))});
+        error_ = refusal(MessageId::JsonTooManyValues, {count_argument(static_cast<std::int64_t>(kMostValues))});
         return false;
     }
     Json* place(Json value) {
@@ -96,7 +92,7 @@ private:
     }
     bool open(Json container) {
         if (open_.size() >= kDeepestNesting) {
-            error_ = wrong(MessageId::JsonTooDeep, {count_argument(static_cast<std::int64_t>(kDeepestNesting))});
+            error_ = refusal(MessageId::JsonTooDeep, {count_argument(static_cast<std::int64_t>(kDeepestNesting))});
             return false;
         }
         open_.push_back(place(std::move(container)));
@@ -143,7 +139,7 @@ Result<Json> parse_json(std::string_view text) {
     if (builder.error())
         return *builder.error();
     if (!whole)
-        return wrong(MessageId::JsonMalformed, {count_argument(1), count_argument(1)});
+        return refusal(MessageId::JsonMalformed, {count_argument(1), count_argument(1)});
     return builder.take();
 }
 

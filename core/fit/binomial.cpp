@@ -11,13 +11,13 @@
 #include <boost/math/special_functions/log1p.hpp>
 
 #include "core/fit/statistics.h"
+#include "core/numeric/tails.h"
 
 namespace filial::fit {
 namespace {
 
 __extension__ using Wide = __int128;
 
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
 constexpr double kEpsilon = std::numeric_limits<double>::epsilon();
 // Up to this standard deviation a tail is summed term by term; above, its integral is cheaper and as accurate.
 constexpr double kSumUpToDeviation = 60.0;
@@ -159,7 +159,7 @@ double Binomial::upper_tail_over_term(std::int64_t x) const {
 
 double Binomial::log_upper_tail(std::int64_t x) const {
     if (x > n_)
-        return -kInfinity;
+        return -numeric::kInfinity;
     if (x <= 0)
         return 0.0;
     return log_pmf(x) + std::log(upper_tail_over_term(x));
@@ -167,7 +167,7 @@ double Binomial::log_upper_tail(std::int64_t x) const {
 
 double Binomial::log_lower_tail(std::int64_t x) const {
     if (x < 0)
-        return -kInfinity;
+        return -numeric::kInfinity;
     if (x >= n_)
         return 0.0;
     const auto from = static_cast<double>(x);

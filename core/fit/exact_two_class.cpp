@@ -6,13 +6,13 @@
 #include <limits>
 
 #include "core/fit/binomial.h"
+#include "core/numeric/tails.h"
 
 namespace filial::fit {
 namespace {
 
 __extension__ using Wide = __int128;
 
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
 constexpr double kTieTolerance = 1e-12;
 constexpr double kReadingsDiffer = 1e-9;
 constexpr double kExactBracket = 1e-6;       // wider is called bounded
@@ -116,8 +116,8 @@ template <class Predicate> Outer outer_of(std::int64_t n, std::int64_t peak, Out
 
 double log_add(double a, double b) {
     const double larger = std::max(a, b);
-    if (larger == -kInfinity)
-        return -kInfinity;
+    if (larger == -numeric::kInfinity)
+        return -numeric::kInfinity;
     return larger + std::log1p(std::exp(std::min(a, b) - larger));
 }
 

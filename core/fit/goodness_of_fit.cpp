@@ -20,10 +20,6 @@ namespace {
 
 constexpr double kMinusInfinity = -std::numeric_limits<double>::infinity();
 
-Message reason(MessageId id) {
-    return Message{id, {}};
-}
-
 Fitted fit_parameters(const Input& input, const Sample& sample) {
     std::vector<std::vector<std::size_t>> groups;
     std::vector<std::int64_t> counts;
@@ -53,7 +49,7 @@ std::vector<Estimate> estimates_of(const Input& input, const Sample& sample, con
         if (fitted.standard_error)
             estimate.standard_error = *fitted.standard_error;
         else
-            estimate.standard_error = reason(MessageId::FitEstimateAtBoundary);
+            estimate.standard_error = plain_message(MessageId::FitEstimateAtBoundary);
         estimates.push_back(std::move(estimate));
     }
     return estimates;
@@ -61,7 +57,7 @@ std::vector<Estimate> estimates_of(const Input& input, const Sample& sample, con
 
 Maybe<Exact> exact_of(const Input& input, const Sample& sample, const TestSituation& situation) {
     if (sample.n == 0)
-        return reason(MessageId::FitNoPlants);
+        return plain_message(MessageId::FitNoPlants);
     if (impossible(sample)) {
         Exact exact;
         exact.p = {0.0, kMinusInfinity};
@@ -71,11 +67,11 @@ Maybe<Exact> exact_of(const Input& input, const Sample& sample, const TestSituat
         return exact;
     }
     if (!situation.fixed)
-        return reason(MessageId::FitOnlyNothingFitted);
+        return plain_message(MessageId::FitOnlyNothingFitted);
     if (sample.possible > 2)
-        return reason(MessageId::FitExactTwoClassesOnly);
+        return plain_message(MessageId::FitExactTwoClassesOnly);
     if (sample.possible < 2)
-        return reason(MessageId::FitNoDegreesOfFreedom);
+        return plain_message(MessageId::FitNoDegreesOfFreedom);
     return exact_two_class(sample, input.order);
 }
 
@@ -83,7 +79,7 @@ Maybe<double> effect_of(const GoodnessOfFit& result, const Sample& sample) {
     if (!result.chi_square)
         return result.chi_square.why_not;
     if (impossible(sample))
-        return reason(MessageId::FitForbiddenSeen);
+        return plain_message(MessageId::FitForbiddenSeen);
     return std::sqrt(result.chi_square->statistic / static_cast<double>(sample.n));
 }
 
@@ -91,7 +87,7 @@ Maybe<double> effect_of(const GoodnessOfFit& result, const Sample& sample) {
 std::optional<Error> refused_method(const Input& input, const Maybe<Exact>& exact) {
     if (input.method != Method::Exact || exact || exact.why_not.id == MessageId::FitNoPlants)
         return std::nullopt;
-    return Error{ErrorKind::Input, reason(MessageId::FitExactUnavailable), {}};
+    return Error{ErrorKind::Input, plain_message(MessageId::FitExactUnavailable), {}};
 }
 
 void note_unidentified(GoodnessOfFit& result, const Fitted& fitted) {
@@ -120,7 +116,7 @@ void run_tests(GoodnessOfFit& result, const Sample& sample, const Fitted& fitted
     result.g = likelihood_ratio_test(sample, situation);
     result.yates = yates_test(sample, situation);
     result.exact = exact_of(input, sample, situation);
-    result.simulated = reason(MessageId::FitNotSimulated);
+    result.simulated = plain_message(MessageId::FitNotSimulated);
     result.partition = partition_by_traits(input);
     result.effect_w = effect_of(result, sample);
     result.detectable = detectable_departures(sample, input.alpha, result.df);
@@ -132,7 +128,7 @@ Result<GoodnessOfFit> goodness_of_fit(const Input& input, const CancellationToke
     if (Done checked = check_input(input); !checked)
         return checked.error();
     if (cancel.cancelled())
-        return Error{ErrorKind::Input, reason(MessageId::Cancelled), {}};
+        return Error{ErrorKind::Input, plain_message(MessageId::Cancelled), {}};
     Sample sample = join_classes(input);
     const Fitted fitted = fit_parameters(input, sample);
     set_probabilities(sample, input.hypothesis, fitted.beta);

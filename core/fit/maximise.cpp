@@ -9,10 +9,11 @@
 
 #include <boost/math/tools/toms748_solve.hpp>
 
+#include "core/numeric/tails.h"
+
 namespace filial::fit {
 namespace {
 
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
 constexpr int kStarts = 16;
 constexpr double kFlat = 1e-12; // relative size of a derivative or score that counts as zero
 
@@ -44,7 +45,8 @@ public:
         const auto& points = at(beta);
         for (std::size_t g = 0; g < counts_.size(); ++g)
             if (counts_[g] > 0)
-                total += points[g].p > 0.0 ? static_cast<double>(counts_[g]) * std::log(points[g].p) : -kInfinity;
+                total +=
+                    points[g].p > 0.0 ? static_cast<double>(counts_[g]) * std::log(points[g].p) : -numeric::kInfinity;
         return total;
     }
 
@@ -121,12 +123,12 @@ std::optional<double> root_beside_bound(Likelihood& likelihood, double bound, do
 
 struct Candidate {
     double beta = 0.0;
-    double log_likelihood = -kInfinity;
+    double log_likelihood = -numeric::kInfinity;
     bool bound = false;
 };
 
 std::vector<Candidate> candidates(Likelihood& likelihood, double low, double high) {
-    std::vector<Candidate> found{{low, -kInfinity, true}, {high, -kInfinity, true}};
+    std::vector<Candidate> found{{low, -numeric::kInfinity, true}, {high, -numeric::kInfinity, true}};
     std::vector<std::pair<double, double>> starts; // interior points and their scores
     for (int i = 0; i < kStarts; ++i) {
         const double beta = low + (high - low) * (i + 0.5) / kStarts;
@@ -134,13 +136,14 @@ std::vector<Candidate> candidates(Likelihood& likelihood, double low, double hig
     }
     for (std::size_t i = 0; i + 1 < starts.size(); ++i)
         if (starts[i].second >= 0.0 && starts[i + 1].second <= 0.0)
-            found.push_back({root_of_score(likelihood, starts[i].first, starts[i + 1].first), -kInfinity, false});
+            found.push_back(
+                {root_of_score(likelihood, starts[i].first, starts[i + 1].first), -numeric::kInfinity, false});
     if (starts.front().second < 0.0)
         if (const auto root = root_beside_bound(likelihood, low, starts.front().first, false))
-            found.push_back({*root, -kInfinity, false});
+            found.push_back({*root, -numeric::kInfinity, false});
     if (starts.back().second > 0.0)
         if (const auto root = root_beside_bound(likelihood, high, starts.back().first, true))
-            found.push_back({*root, -kInfinity, false});
+            found.push_back({*root, -numeric::kInfinity, false});
     for (Candidate& candidate : found)
         candidate.log_likelihood = likelihood.log_likelihood(candidate.beta);
     return found;

@@ -14,10 +14,6 @@ using Subset = std::uint32_t; // bit t: factor t is in the set
 
 constexpr std::size_t kMostTraits = 6; // 64 classes of two levels each
 
-Message reason(MessageId id) {
-    return Message{id, {}};
-}
-
 // Counts over the levels of a subset of the traits, and how far each is from its probability.
 class Margins {
 public:
@@ -156,22 +152,22 @@ PartitionRow row_of(const Input& input, const std::vector<inheritance::Factor>& 
 
 Maybe<std::vector<PartitionRow>> partition_by_traits(const Input& input) {
     if (input.level_counts.size() < 2 || input.level_counts.size() > kMostTraits)
-        return reason(MessageId::FitPartitionNeedsTraits);
+        return plain_message(MessageId::FitPartitionNeedsTraits);
     if (!input.joins.empty())
-        return reason(MessageId::FitPartitionJoined);
+        return plain_message(MessageId::FitPartitionJoined);
     const ratio::Ratio* ratio = input.hypothesis.ratio();
     if (ratio == nullptr || input.fitted_elsewhere > 0)
-        return reason(MessageId::FitOnlyNothingFitted);
+        return plain_message(MessageId::FitOnlyNothingFitted);
     const auto factors = inheritance::product_factors(*ratio, input.level_counts);
     if (factors.size() != input.level_counts.size())
-        return reason(MessageId::FitPartitionNoProduct);
+        return plain_message(MessageId::FitPartitionNoProduct);
     for (const inheritance::Factor& factor : factors)
         if (factor.weights.size() < 2 ||
             std::any_of(factor.weights.begin(), factor.weights.end(), [](std::int64_t w) { return w <= 0; }))
-            return reason(MessageId::FitPartitionNoProduct);
+            return plain_message(MessageId::FitPartitionNoProduct);
     const Margins margins(input, factors);
     if (margins.n() == 0)
-        return reason(MessageId::FitNoPlants);
+        return plain_message(MessageId::FitNoPlants);
     std::vector<PartitionRow> rows;
     const auto sets = Subset{1} << factors.size();
     for (std::size_t size = 1; size <= factors.size(); ++size) // single traits first, then pairs, …

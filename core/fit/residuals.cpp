@@ -14,10 +14,6 @@ namespace {
 constexpr double kIntervalError = 0.05; // the intervals are called 95 % on screen, whatever alpha the test has
 constexpr double kNoVariance = 1e-12;   // share of the binomial variance that counts as none
 
-Message reason(MessageId id) {
-    return Message{id, {}};
-}
-
 std::string joined_label(const Cell& cell, const std::vector<std::string>& labels) {
     std::string label;
     for (const std::size_t member : cell.members)
@@ -41,19 +37,19 @@ Maybe<double> adjusted_residual(const Sample& sample, const Cell& cell, double i
     if (information_per_plant > 0.0 && !cell.derivative.empty())
         variance -= cell.derivative.front() * cell.derivative.front() / information_per_plant;
     if (!(variance > kNoVariance * binomial))
-        return reason(MessageId::FitNoResidualVariance);
+        return plain_message(MessageId::FitNoResidualVariance);
     return cell.excess / std::sqrt(static_cast<double>(sample.n) * variance);
 }
 
 void set_residuals(ClassResult& result, const Sample& sample, const Cell& cell, const ClassSituation& situation,
                    double information_per_plant) {
     const auto none = [&result](MessageId id) {
-        result.adjusted_residual = reason(id);
-        result.p = result.p_holm = reason(id);
+        result.adjusted_residual = plain_message(id);
+        result.p = result.p_holm = plain_message(id);
     };
     if (cell.probability <= 0.0 || sample.n == 0) {
         const MessageId id = sample.n == 0 ? MessageId::FitNoPlants : MessageId::FitClassForbidden;
-        result.residual = reason(id);
+        result.residual = plain_message(id);
         return none(id);
     }
     result.residual = cell.excess / std::sqrt(cell.expected);
@@ -77,7 +73,7 @@ void set_intervals(ClassResult& result, const Sample& sample, const Cell& cell, 
     if (sample.n == 0) {
         for (Maybe<double>* limit : {&result.interval_low, &result.interval_high, &result.exact_low, &result.exact_high,
                                      &result.simultaneous_low, &result.simultaneous_high})
-            *limit = reason(MessageId::FitNoPlants);
+            *limit = plain_message(MessageId::FitNoPlants);
         return;
     }
     const Interval wilson = wilson_interval(cell.observed, sample.n, z);

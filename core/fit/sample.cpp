@@ -11,31 +11,23 @@ __extension__ using Wide = __int128; // A*O and N*a stay below 2^115
 
 constexpr int kMostFittedElsewhere = 1000;
 
-Error refuse(MessageId id, std::vector<Argument> arguments) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, {}};
-}
-
-Argument size_argument(std::size_t size) {
-    return count_argument(static_cast<std::int64_t>(size));
-}
-
 Done check_joins(const Input& input) {
     std::vector<bool> taken(input.observed.size(), false);
     std::size_t left = input.observed.size();
     for (const auto& join : input.joins) {
         if (join.size() < 2)
-            return refuse(MessageId::FitJoinTooSmall, {});
+            return refusal(MessageId::FitJoinTooSmall, {});
         for (const std::size_t member : join) {
             if (member >= taken.size())
-                return refuse(MessageId::FitJoinOutOfRange, {size_argument(member + 1), size_argument(taken.size())});
+                return refusal(MessageId::FitJoinOutOfRange, {size_argument(member + 1), size_argument(taken.size())});
             if (taken[member])
-                return refuse(MessageId::FitJoinOverlaps, {text_argument(input.labels[member])});
+                return refusal(MessageId::FitJoinOverlaps, {text_argument(input.labels[member])});
             taken[member] = true;
         }
         left -= join.size() - 1;
     }
     if (left < 2)
-        return refuse(MessageId::FitTooFewClasses, {size_argument(left)});
+        return refusal(MessageId::FitTooFewClasses, {size_argument(left)});
     return done();
 }
 
@@ -46,25 +38,25 @@ Done check_traits(const Input& input) {
     for (const std::size_t levels : input.level_counts)
         product = levels == 0 || product > input.observed.size() ? 0 : product * levels;
     if (product != input.observed.size())
-        return refuse(MessageId::FitTraitsMismatch, {size_argument(product), size_argument(input.observed.size())});
+        return refusal(MessageId::FitTraitsMismatch, {size_argument(product), size_argument(input.observed.size())});
     if (input.trait_names.size() != input.level_counts.size())
-        return refuse(MessageId::FitTraitNamesMismatch,
-                      {size_argument(input.trait_names.size()), size_argument(input.level_counts.size())});
+        return refusal(MessageId::FitTraitNamesMismatch,
+                       {size_argument(input.trait_names.size()), size_argument(input.level_counts.size())});
     return done();
 }
 
 Done check_settings(const Input& input) {
     if (!(input.alpha > 0.0 && input.alpha < 1.0))
-        return refuse(MessageId::FitAlphaOutOfRange, {number_argument(input.alpha, 3)});
+        return refusal(MessageId::FitAlphaOutOfRange, {number_argument(input.alpha, 3)});
     if (input.fitted_elsewhere < 0 || input.fitted_elsewhere > kMostFittedElsewhere)
-        return refuse(MessageId::FitFittedOutOfRange,
-                      {count_argument(input.fitted_elsewhere), count_argument(kMostFittedElsewhere)});
+        return refusal(MessageId::FitFittedOutOfRange,
+                       {count_argument(input.fitted_elsewhere), count_argument(kMostFittedElsewhere)});
     if (input.method == Method::Simulate)
-        return refuse(MessageId::FitSimulateUnavailable, {});
+        return refusal(MessageId::FitSimulateUnavailable, {});
     std::int64_t total = 0;
     for (const Count count : input.observed) {
         if (count.value() > Count::kLargest - total)
-            return refuse(MessageId::FitTotalTooLarge, {count_argument(Count::kLargest)});
+            return refusal(MessageId::FitTotalTooLarge, {count_argument(Count::kLargest)});
         total += count.value();
     }
     return done();
@@ -123,13 +115,13 @@ void set_reals(Sample& sample, const inheritance::ClassProbabilities& classes) {
 Done check_input(const Input& input) {
     const std::size_t classes = input.observed.size();
     if (classes < 2)
-        return refuse(MessageId::FitTooFewClasses, {size_argument(classes)});
+        return refusal(MessageId::FitTooFewClasses, {size_argument(classes)});
     if (input.labels.size() != classes)
-        return refuse(MessageId::FitLabelsMismatch, {size_argument(input.labels.size()), size_argument(classes)});
+        return refusal(MessageId::FitLabelsMismatch, {size_argument(input.labels.size()), size_argument(classes)});
     if (input.hypothesis.class_count() != classes)
-        return refuse(MessageId::FitTermsMismatch,
-                      {ratio_argument(input.hypothesis.notation()), size_argument(input.hypothesis.class_count()),
-                       size_argument(classes)});
+        return refusal(MessageId::FitTermsMismatch,
+                       {ratio_argument(input.hypothesis.notation()), size_argument(input.hypothesis.class_count()),
+                        size_argument(classes)});
     if (Done settings = check_settings(input); !settings)
         return settings;
     if (Done joins = check_joins(input); !joins)

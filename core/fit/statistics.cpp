@@ -10,10 +10,6 @@ namespace {
 
 constexpr double kInfinity = std::numeric_limits<double>::infinity();
 
-Message reason(MessageId id) {
-    return Message{id, {}};
-}
-
 // What stands in the way of a chi-square P; NotComputed where nothing does.
 MessageId obstacle(const TestSituation& situation) {
     if (situation.df < 1)
@@ -86,18 +82,18 @@ double williams_general_q(const Sample& sample) {
 
 Maybe<ChiSquare> chi_square_test(const Sample& sample, const TestSituation& situation) {
     if (sample.n == 0)
-        return reason(MessageId::FitNoPlants);
+        return plain_message(MessageId::FitNoPlants);
     ChiSquare result;
     if (impossible(sample)) {
         result.statistic = kInfinity;
         result.p = Tail{0.0, -kInfinity};
-        result.p_too_close = reason(MessageId::FitForbiddenSeen);
+        result.p_too_close = plain_message(MessageId::FitForbiddenSeen);
         return result;
     }
     result.statistic = pearson_statistic(sample);
     if (const MessageId found = obstacle(situation); found != MessageId::NotComputed) {
-        result.p = reason(found);
-        result.p_too_close = reason(found);
+        result.p = plain_message(found);
+        result.p_too_close = plain_message(found);
         return result;
     }
     result.p = numeric::chi_square_upper(result.statistic, situation.df);
@@ -107,11 +103,11 @@ Maybe<ChiSquare> chi_square_test(const Sample& sample, const TestSituation& situ
 
 Maybe<LikelihoodRatio> likelihood_ratio_test(const Sample& sample, const TestSituation& situation) {
     if (sample.n == 0)
-        return reason(MessageId::FitNoPlants);
+        return plain_message(MessageId::FitNoPlants);
     LikelihoodRatio result;
     const auto no_williams = [&result](MessageId id) {
-        result.williams_statistic = result.williams_general_statistic = reason(id);
-        result.williams_p = result.williams_general_p = reason(id);
+        result.williams_statistic = result.williams_general_statistic = plain_message(id);
+        result.williams_p = result.williams_general_p = plain_message(id);
     };
     if (impossible(sample)) {
         result.statistic = kInfinity;
@@ -121,7 +117,7 @@ Maybe<LikelihoodRatio> likelihood_ratio_test(const Sample& sample, const TestSit
     }
     result.statistic = likelihood_ratio_statistic(sample);
     if (const MessageId found = obstacle(situation); found != MessageId::NotComputed) {
-        result.p = reason(found);
+        result.p = plain_message(found);
         no_williams(found);
         return result;
     }
@@ -141,13 +137,13 @@ Maybe<LikelihoodRatio> likelihood_ratio_test(const Sample& sample, const TestSit
 
 Maybe<Yates> yates_test(const Sample& sample, const TestSituation& situation) {
     if (sample.n == 0)
-        return reason(MessageId::FitNoPlants);
+        return plain_message(MessageId::FitNoPlants);
     if (sample.possible != 2)
-        return reason(MessageId::FitOnlyTwoClasses);
+        return plain_message(MessageId::FitOnlyTwoClasses);
     if (!situation.fixed)
-        return reason(MessageId::FitOnlyNothingFitted);
+        return plain_message(MessageId::FitOnlyNothingFitted);
     if (impossible(sample))
-        return reason(MessageId::FitForbiddenSeen);
+        return plain_message(MessageId::FitForbiddenSeen);
     Yates result;
     result.statistic = yates_statistic(sample);
     result.p = numeric::chi_square_upper(result.statistic, 1.0);

@@ -4,8 +4,15 @@
 #include <algorithm>
 #include <utility>
 
+#include "core/numeric/ascii.h"
+
 namespace filial::inheritance {
 namespace {
+
+using ascii::is_letter;
+using ascii::is_upper;
+using ascii::lower;
+using ascii::upper;
 
 struct Token {
     std::size_t place = 0;
@@ -28,30 +35,8 @@ struct TypedPlant {
 
 constexpr std::string_view kTimes = "\xC3\x97"; // the multiplication sign
 
-bool is_upper(char c) {
-    return c >= 'A' && c <= 'Z';
-}
-
-bool is_letter(char c) {
-    return is_upper(c) || (c >= 'a' && c <= 'z');
-}
-
-char upper(char c) {
-    return is_letter(c) && !is_upper(c) ? static_cast<char>(c - 'a' + 'A') : c;
-}
-
 Allele allele_of(char c) {
     return is_upper(c) ? Allele::Dominant : Allele::Recessive;
-}
-
-std::string lower(std::string text) {
-    std::transform(text.begin(), text.end(), text.begin(),
-                   [](char c) { return is_upper(c) ? static_cast<char>(c - 'A' + 'a') : c; });
-    return text;
-}
-
-Error refusal(MessageId id, std::size_t place, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
 }
 
 std::vector<Token> tokens_of(std::string_view text) {
@@ -134,22 +119,22 @@ Result<TypedPlant> read_plant(const std::vector<Token>& tokens, std::size_t& at,
     while (at < tokens.size() && !is_cross_sign(tokens[at]) && !is_selfed(tokens[at])) {
         const std::size_t before = plant.loci.size();
         if (!read_loci(tokens[at].text, plant.loci))
-            return refusal(MessageId::DerivePlantNotUnderstood, tokens[at].place, {text_argument(tokens[at].text)});
+            return refusal_at(MessageId::DerivePlantNotUnderstood, tokens[at].place, {text_argument(tokens[at].text)});
         for (std::size_t i = before; i < plant.loci.size(); ++i)
             for (std::size_t j = 0; j < i; ++j)
                 if (plant.loci[i].locus.letter == plant.loci[j].locus.letter ||
                     (plant.loci[i].locus.sex_linked() && plant.loci[j].locus.sex_linked()))
-                    return refusal(plant.loci[i].locus.letter == plant.loci[j].locus.letter
-                                       ? MessageId::DeriveLocusTwice
-                                       : MessageId::DeriveTwoSexLinkedLoci,
-                                   tokens[at].place, {text_argument(std::string(1, plant.loci[i].locus.letter))});
+                    return refusal_at(plant.loci[i].locus.letter == plant.loci[j].locus.letter
+                                          ? MessageId::DeriveLocusTwice
+                                          : MessageId::DeriveTwoSexLinkedLoci,
+                                      tokens[at].place, {text_argument(std::string(1, plant.loci[i].locus.letter))});
         if (plant.loci.size() > kMostLoci)
-            return refusal(MessageId::DeriveTooManyLoci, tokens[at].place, {count_argument(kMostLoci)});
+            return refusal_at(MessageId::DeriveTooManyLoci, tokens[at].place, {count_argument(kMostLoci)});
         plant.text += (plant.text.empty() ? "" : " ") + tokens[at].text;
         ++at;
     }
     if (plant.loci.empty())
-        return refusal(MessageId::DerivePlantMissing, plant.place);
+        return refusal_at(MessageId::DerivePlantMissing, plant.place);
     return plant;
 }
 
@@ -165,8 +150,8 @@ Result<Plant> placed(const TypedPlant& typed, const std::vector<Locus>& loci) {
         const auto found = std::find_if(typed.loci.begin(), typed.loci.end(),
                                         [&](const TypedLocus& one) { return one.locus == loci[i]; });
         if (found == typed.loci.end())
-            return refusal(MessageId::DeriveLociDiffer, typed.place,
-                           {text_argument(typed.text), text_argument(std::string(1, loci[i].letter))});
+            return refusal_at(MessageId::DeriveLociDiffer, typed.place,
+                              {text_argument(typed.text), text_argument(std::string(1, loci[i].letter))});
         const bool swap = !found->phased && found->second < found->first;
         first.alleles[i] = swap ? found->second : found->first;
         second.alleles[i] = swap ? found->first : found->second;
@@ -178,8 +163,8 @@ Result<Plant> placed(const TypedPlant& typed, const std::vector<Locus>& loci) {
     }
     for (const TypedLocus& one : typed.loci)
         if (std::find(loci.begin(), loci.end(), one.locus) == loci.end())
-            return refusal(MessageId::DeriveLocusUnknown, typed.place,
-                           {text_argument(typed.text), text_argument(std::string(1, one.locus.letter))});
+            return refusal_at(MessageId::DeriveLocusUnknown, typed.place,
+                              {text_argument(typed.text), text_argument(std::string(1, one.locus.letter))});
     plant.genotype = Genotype::of(first, second);
     plant.phase_taken = heterozygous > 1 && unphased > 0;
     return plant;
@@ -195,11 +180,11 @@ Done check_sexes(const CrossPlan& plan) {
         if (!plan.loci[locus].sex_linked())
             continue;
         if (plan.steps.size() != 1 || !plan.steps[0].other)
-            return refusal(MessageId::DeriveSexLinkedOneCross, plan.first.place);
+            return refusal_at(MessageId::DeriveSexLinkedOneCross, plan.first.place);
         const Plant& other = *plan.steps[0].other;
         if (heterogametic(plan.first, locus) == heterogametic(other, locus))
-            return refusal(MessageId::DeriveSameSex, other.place,
-                           {text_argument(plan.first.text), text_argument(other.text)});
+            return refusal_at(MessageId::DeriveSameSex, other.place,
+                              {text_argument(plan.first.text), text_argument(other.text)});
     }
     return done();
 }
@@ -211,8 +196,8 @@ Result<int> read_selfings(const std::vector<Token>& tokens, std::size_t& at) {
     const bool digits = text.size() <= 2 && text.find_first_not_of("0123456789") == std::string::npos;
     const int number = digits ? std::stoi(text) : 0;
     if (number < 1 || number > kMostSelfings)
-        return refusal(MessageId::DeriveSelfedNumber, tokens[at].place,
-                       {text_argument(text), count_argument(kMostSelfings)});
+        return refusal_at(MessageId::DeriveSelfedNumber, tokens[at].place,
+                          {text_argument(text), count_argument(kMostSelfings)});
     ++at;
     return number;
 }
@@ -226,7 +211,7 @@ Result<Step> read_step(const std::vector<Token>& tokens, std::size_t& at, const 
         return Step{std::nullopt, selfings.value()};
     }
     if (!is_cross_sign(tokens[at]))
-        return refusal(MessageId::DerivePlantNotUnderstood, tokens[at].place, {text_argument(tokens[at].text)});
+        return refusal_at(MessageId::DerivePlantNotUnderstood, tokens[at].place, {text_argument(tokens[at].text)});
     const Result<TypedPlant> typed = read_plant(tokens, ++at, end_of_text);
     if (!typed)
         return typed.error();
@@ -240,7 +225,7 @@ Result<Step> read_step(const std::vector<Token>& tokens, std::size_t& at, const 
 
 Result<CrossPlan> read_cross_plan(std::string_view text) {
     if (text.size() > kLongestText)
-        return refusal(MessageId::DeriveTooLong, kLongestText);
+        return refusal_at(MessageId::DeriveTooLong, kLongestText);
     const std::vector<Token> tokens = tokens_of(text);
     std::size_t at = 0;
     const Result<TypedPlant> typed = read_plant(tokens, at, text.size());
@@ -251,7 +236,7 @@ Result<CrossPlan> read_cross_plan(std::string_view text) {
         plan.loci.push_back(locus.locus);
     plan.first = placed(typed.value(), plan.loci).value();
     if (at == tokens.size())
-        return refusal(MessageId::DeriveNoMating, text.size());
+        return refusal_at(MessageId::DeriveNoMating, text.size());
     int generations = 0;
     while (at < tokens.size()) {
         const std::size_t place = tokens[at].place;
@@ -260,7 +245,7 @@ Result<CrossPlan> read_cross_plan(std::string_view text) {
             return step.error();
         generations += std::max(1, step.value().selfings);
         if (generations > kMostSelfings)
-            return refusal(MessageId::DeriveTooManyGenerations, place, {count_argument(kMostSelfings)});
+            return refusal_at(MessageId::DeriveTooManyGenerations, place, {count_argument(kMostSelfings)});
         plan.steps.push_back(std::move(step).value());
     }
     if (const Done sexes = check_sexes(plan); !sexes)

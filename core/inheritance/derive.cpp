@@ -17,10 +17,6 @@ namespace {
 using Whole = boost::multiprecision::cpp_int;
 using Exact = boost::multiprecision::cpp_rational;
 
-Error refusal(MessageId id, std::optional<std::size_t> place, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
-}
-
 bool linked_interval(const std::vector<Locus>& loci, std::size_t interval) {
     return !loci[interval].sex_linked() && !loci[interval + 1].sex_linked();
 }
@@ -105,14 +101,15 @@ Result<std::size_t> class_of(const Genotype& genotype, const CrossPlan& plan, co
         if (!any_takes_in(grouping.classes[i].patterns, genotype, plan.loci.size()))
             continue;
         if (found)
-            return refusal(MessageId::DeriveShowOverlap, std::nullopt,
-                           {text_argument(genotype_text(genotype, plan.loci, false)),
-                            text_argument(grouping.classes[*found].label), text_argument(grouping.classes[i].label)});
+            return refusal_at(MessageId::DeriveShowOverlap, std::nullopt,
+                              {text_argument(genotype_text(genotype, plan.loci, false)),
+                               text_argument(grouping.classes[*found].label),
+                               text_argument(grouping.classes[i].label)});
         found = i;
     }
     if (!found)
-        return refusal(MessageId::DeriveShowMissing, std::nullopt,
-                       {text_argument(genotype_text(genotype, plan.loci, false))});
+        return refusal_at(MessageId::DeriveShowMissing, std::nullopt,
+                          {text_argument(genotype_text(genotype, plan.loci, false))});
     return *found;
 }
 
@@ -132,7 +129,7 @@ Done check_kept_back(const CrossPlan& plan, const Grouping& grouping) {
         strands = std::move(longer);
     }
     const auto overlap = [&](const Genotype& genotype, const std::string& one, const std::string& other) {
-        return refusal(
+        return refusal_at(
             MessageId::DeriveShowOverlap, std::nullopt,
             {text_argument(genotype_text(genotype, plan.loci, false)), text_argument(one), text_argument(other)});
     };
@@ -167,7 +164,7 @@ template <class Scalar>
 Result<Shares<Scalar>> shares_of(const CrossPlan& plan, Grouping& grouping, bool phased, const Scalar& r) {
     const auto plants = run(plan, grouping, r);
     if (!plants)
-        return refusal(MessageId::DeriveShowAllDie, std::nullopt);
+        return refusal_at(MessageId::DeriveShowAllDie, std::nullopt);
     Shares<Scalar> shares{table_of(*plants, phased), {}, {}};
     if (grouping.only_arising)
         keep_what_arises(grouping, shares.table, plan.loci.size());
@@ -277,10 +274,10 @@ std::vector<Message> phase_notes(const CrossPlan& plan) {
 Done check_parents_live(const CrossPlan& plan, const Grouping& grouping) {
     const auto dies = [&](const Plant& plant) { return any_takes_in(grouping.dies, plant.genotype, plan.loci.size()); };
     if (dies(plan.first))
-        return refusal(MessageId::DeriveShowParentDies, std::nullopt, {text_argument(plan.first.text)});
+        return refusal_at(MessageId::DeriveShowParentDies, std::nullopt, {text_argument(plan.first.text)});
     for (const Step& step : plan.steps)
         if (step.other && dies(*step.other))
-            return refusal(MessageId::DeriveShowParentDies, std::nullopt, {text_argument(step.other->text)});
+            return refusal_at(MessageId::DeriveShowParentDies, std::nullopt, {text_argument(step.other->text)});
     return done();
 }
 
@@ -304,7 +301,7 @@ Result<Derivation> derive(const DeriveInput& input) {
     if (!plan)
         return plan.error();
     if (input.linkage && !has_linked_interval(plan.value().loci))
-        return refusal(MessageId::DeriveLinkageNeedsTwoLoci, plan.value().first.place);
+        return refusal_at(MessageId::DeriveLinkageNeedsTwoLoci, plan.value().first.place);
     const Result<Grouping> grouping = grouping_of(input, plan.value());
     if (!grouping)
         return grouping.error();

@@ -5,8 +5,15 @@
 #include <optional>
 #include <utility>
 
+#include "core/numeric/ascii.h"
+
 namespace filial::inheritance {
 namespace {
+
+using ascii::is_letter;
+using ascii::is_space;
+using ascii::is_upper;
+using ascii::upper;
 
 constexpr PairSet kWithDominant = kDominantPair | kMixedPair;
 constexpr PairSet kWithRecessive = kMixedPair | kRecessivePair;
@@ -23,32 +30,12 @@ PairSet pair_of(Allele one, Allele other) {
     return one == Allele::Dominant ? kDominantPair : kRecessivePair;
 }
 
-bool is_upper(char c) {
-    return c >= 'A' && c <= 'Z';
-}
-
-bool is_letter(char c) {
-    return is_upper(c) || (c >= 'a' && c <= 'z');
-}
-
-char upper(char c) {
-    return is_letter(c) && !is_upper(c) ? static_cast<char>(c - 'a' + 'A') : c;
-}
-
-bool is_space(char c) {
-    return c == ' ' || c == '\t' || c == '\n' || c == '\r';
-}
-
 std::string_view trimmed(std::string_view text) {
     while (!text.empty() && is_space(text.front()))
         text.remove_prefix(1);
     while (!text.empty() && is_space(text.back()))
         text.remove_suffix(1);
     return text;
-}
-
-Error refusal(MessageId id, std::size_t place, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
 }
 
 /// The pairs that two places of a pattern allow, each an allele of the locus or '_'.
@@ -186,14 +173,14 @@ Done read_entry(std::string_view entry, std::size_t place, const std::vector<Loc
     }
     const std::size_t equals = entry.find('=');
     if (equals == std::string_view::npos)
-        return refusal(MessageId::DeriveShowMissingEquals, place, {text_argument(std::string(trimmed(entry)))});
+        return refusal_at(MessageId::DeriveShowMissingEquals, place, {text_argument(std::string(trimmed(entry)))});
     const std::string_view typed = trimmed(entry.substr(0, equals));
     const auto pattern = PatternReader(typed, loci).read();
     if (!pattern)
-        return refusal(MessageId::DeriveShowPattern, place, {text_argument(std::string(typed))});
+        return refusal_at(MessageId::DeriveShowPattern, place, {text_argument(std::string(typed))});
     const std::string label(trimmed(entry.substr(equals + 1)));
     if (label.empty())
-        return refusal(MessageId::DeriveShowLabelMissing, place + equals + 1, {text_argument(std::string(typed))});
+        return refusal_at(MessageId::DeriveShowLabelMissing, place + equals + 1, {text_argument(std::string(typed))});
     patterns_of(grouping, label).push_back(*pattern);
     return done();
 }
@@ -214,7 +201,7 @@ bool any_takes_in(const std::vector<Pattern>& patterns, const Genotype& genotype
 
 Result<Grouping> read_grouping(std::string_view text, const std::vector<Locus>& loci) {
     if (text.size() > kLongestText)
-        return refusal(MessageId::DeriveTooLong, kLongestText);
+        return refusal_at(MessageId::DeriveTooLong, kLongestText);
     Grouping grouping;
     std::size_t begin = 0;
     for (std::size_t i = 0; i <= text.size(); ++i) {
@@ -225,7 +212,7 @@ Result<Grouping> read_grouping(std::string_view text, const std::vector<Locus>& 
         begin = i + 1;
     }
     if (grouping.classes.empty())
-        return refusal(MessageId::DeriveShowNoClass, 0);
+        return refusal_at(MessageId::DeriveShowNoClass, 0);
     return grouping;
 }
 

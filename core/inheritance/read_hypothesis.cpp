@@ -6,21 +6,19 @@
 
 #include "core/inheritance/hypothesis.h"
 
+#include "core/numeric/ascii.h"
+
 namespace filial::inheritance {
 namespace {
+
+using ascii::is_letter;
+using ascii::is_space;
+using ascii::lower;
 
 struct Piece {
     std::size_t place = 0;
     std::string text;
 };
-
-bool is_space(char c) {
-    return c == ' ' || c == '\t' || c == '\n' || c == '\r';
-}
-
-bool is_letter(char c) {
-    return (c >= 'a' && c <= 'z') || (c >= 'A' && c <= 'Z');
-}
 
 Piece trimmed(std::string_view text, std::size_t begin, std::size_t end) {
     while (begin < end && is_space(text[begin]))
@@ -28,16 +26,6 @@ Piece trimmed(std::string_view text, std::size_t begin, std::size_t end) {
     while (end > begin && is_space(text[end - 1]))
         --end;
     return {begin, std::string(text.substr(begin, end - begin))};
-}
-
-std::string lower(std::string text) {
-    std::transform(text.begin(), text.end(), text.begin(),
-                   [](char c) { return c >= 'A' && c <= 'Z' ? static_cast<char>(c - 'A' + 'a') : c; });
-    return text;
-}
-
-Error refusal(MessageId id, std::size_t place, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
 }
 
 /// The value after "r=": nothing for "fit".
@@ -52,9 +40,9 @@ Result<std::optional<RecombinationFraction>> read_r(const Piece& value) {
         if (r && !std::signbit(number))
             return std::optional(*r);
         if (!std::isnan(number))
-            return refusal(MessageId::HypothesisROutside, value.place, {text_argument(value.text)});
+            return refusal_at(MessageId::HypothesisROutside, value.place, {text_argument(value.text)});
     }
-    return refusal(MessageId::HypothesisRNotANumber, value.place, {text_argument(value.text)});
+    return refusal_at(MessageId::HypothesisRNotANumber, value.place, {text_argument(value.text)});
 }
 
 struct Arguments {
@@ -67,15 +55,15 @@ Done read_argument(const Piece& piece, Arguments& into) {
     const std::string word = lower(piece.text);
     if (word == "coupling" || word == "repulsion") {
         if (into.phase)
-            return refusal(MessageId::HypothesisPhaseTwice, piece.place);
+            return refusal_at(MessageId::HypothesisPhaseTwice, piece.place);
         into.phase = word == "coupling" ? Phase::Coupling : Phase::Repulsion;
         return done();
     }
     const std::size_t equals = word.find('=');
     if (equals == std::string::npos || trimmed(word, 0, equals).text != "r")
-        return refusal(MessageId::HypothesisUnknownArgument, piece.place, {text_argument(piece.text)});
+        return refusal_at(MessageId::HypothesisUnknownArgument, piece.place, {text_argument(piece.text)});
     if (into.has_r)
-        return refusal(MessageId::HypothesisRTwice, piece.place);
+        return refusal_at(MessageId::HypothesisRTwice, piece.place);
     Piece value = trimmed(piece.text, equals + 1, piece.text.size());
     value.place += piece.place;
     const auto r = read_r(value);
@@ -100,9 +88,9 @@ Result<Arguments> read_arguments(std::string_view text, std::size_t open, std::s
             return read.error();
     }
     if (!arguments.phase)
-        return refusal(MessageId::HypothesisMissingPhase, open + 1);
+        return refusal_at(MessageId::HypothesisMissingPhase, open + 1);
     if (!arguments.has_r)
-        return refusal(MessageId::HypothesisMissingR, close);
+        return refusal_at(MessageId::HypothesisMissingR, close);
     return arguments;
 }
 
@@ -111,14 +99,14 @@ Result<Hypothesis> read_cross(std::string_view text, std::size_t start) {
     const Piece name = trimmed(text, start, std::min(open, text.size()));
     const std::string word = lower(name.text);
     if (word != "f2" && word != "testcross")
-        return refusal(MessageId::HypothesisUnknownCross, name.place, {text_argument(name.text)});
+        return refusal_at(MessageId::HypothesisUnknownCross, name.place, {text_argument(name.text)});
     if (open == std::string_view::npos)
-        return refusal(MessageId::HypothesisMissingOpening, name.place + name.text.size(), {text_argument(word)});
+        return refusal_at(MessageId::HypothesisMissingOpening, name.place + name.text.size(), {text_argument(word)});
     const std::size_t close = text.find(')', open);
     if (close == std::string_view::npos)
-        return refusal(MessageId::HypothesisMissingClosing, text.size());
+        return refusal_at(MessageId::HypothesisMissingClosing, text.size());
     if (const Piece rest = trimmed(text, close + 1, text.size()); !rest.text.empty())
-        return refusal(MessageId::HypothesisTextAfter, rest.place, {text_argument(rest.text)});
+        return refusal_at(MessageId::HypothesisTextAfter, rest.place, {text_argument(rest.text)});
     const Result<Arguments> arguments = read_arguments(text, open, close);
     if (!arguments)
         return arguments.error();

@@ -23,6 +23,10 @@ Argument count_argument(std::int64_t count) {
     return argument;
 }
 
+Argument size_argument(std::size_t size) {
+    return count_argument(static_cast<std::int64_t>(size));
+}
+
 Argument number_argument(double number, int decimals) {
     Argument argument;
     argument.kind = ArgumentKind::Number;
@@ -44,6 +48,10 @@ Argument percent_argument(double share, int decimals) {
     argument.number = share;
     argument.decimals = decimals;
     return argument;
+}
+
+Message plain_message(MessageId id) {
+    return Message{id, {}};
 }
 
 } // namespace filial

@@ -1,6 +1,7 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <cstddef>
 #include <cstdint>
 #include <string>
 #include <utility>
@@ -41,6 +42,8 @@ struct Argument {
 [[nodiscard]] Argument text_argument(std::string text);
 [[nodiscard]] Argument ratio_argument(std::string notation);
 [[nodiscard]] Argument count_argument(std::int64_t count);
+/// A count argument from a size or a place.
+[[nodiscard]] Argument size_argument(std::size_t size);
 [[nodiscard]] Argument number_argument(double number, int decimals);
 [[nodiscard]] Argument p_argument(double p);
 [[nodiscard]] Argument percent_argument(double share, int decimals);
@@ -51,5 +54,8 @@ struct Message {
 
     friend bool operator==(const Message&, const Message&) = default;
 };
+
+/// A message without arguments.
+[[nodiscard]] Message plain_message(MessageId id);
 
 } // namespace filial

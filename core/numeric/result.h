@@ -6,6 +6,7 @@
 #include <optional>
 #include <utility>
 #include <variant>
+#include <vector>
 
 #include "core/numeric/message.h"
 
@@ -26,6 +27,15 @@ struct Error {
 
     friend bool operator==(const Error&, const Error&) = default;
 };
+
+/// An input error, and one with the byte place of what is wrong.
+[[nodiscard]] inline Error refusal(MessageId id, std::vector<Argument> arguments = {}) {
+    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, std::nullopt};
+}
+[[nodiscard]] inline Error refusal_at(MessageId id, std::optional<std::size_t> place,
+                                      std::vector<Argument> arguments = {}) {
+    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
+}
 
 template <class T> class [[nodiscard]] Result {
 public:

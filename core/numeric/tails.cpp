@@ -21,7 +21,6 @@ constexpr double kSmallestTrusted = 1e-290; // below, the logarithm is taken by 
 const double kLn10 = std::log(10.0);
 // Plain doubles give a critical value to 1e-14 and at a tenth of the time of long doubles.
 using Plain = boost::math::policies::policy<boost::math::policies::promote_double<false>>;
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
 
 // Legendre's continued fraction of the incomplete gamma function (Abramowitz & Stegun 1964, 6.5.31), for x > a + 1.
 struct UpperGammaFraction {

@@ -2,10 +2,13 @@
 #pragma once
 
 #include <cstdint>
+#include <limits>
 
 // Terms. An upper tail is P(X >= x), a lower tail P(X <= x), each computed directly and never as one minus
 // the other. log10_p stays finite where p is too small for a double.
 namespace filial::numeric {
+
+inline constexpr double kInfinity = std::numeric_limits<double>::infinity();
 
 struct Tail {
     double p = 1.0;       ///< 0..1; may underflow to 0

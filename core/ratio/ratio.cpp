@@ -13,10 +13,6 @@ namespace {
 
 constexpr std::int64_t kLargestTotal = std::int64_t{1} << 62U;
 
-Error refusal(MessageId id, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, std::nullopt};
-}
-
 bool all_fractions(const std::vector<std::string>& typed) {
     return std::all_of(typed.begin(), typed.end(),
                        [](const std::string& term) { return term.find('/') != std::string::npos; });

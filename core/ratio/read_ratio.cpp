@@ -8,11 +8,15 @@
 
 #include <boost/multiprecision/cpp_int.hpp>
 
+#include "core/numeric/ascii.h"
 #include "core/ratio/notation.h"
 #include "core/ratio/ratio.h"
 
 namespace filial::ratio {
 namespace {
+
+using ascii::is_digit;
+using ascii::is_space;
 
 using Whole = boost::multiprecision::cpp_int;
 using Exact = boost::multiprecision::cpp_rational;
@@ -32,18 +36,6 @@ struct Term {
     Form form = Form::Integer;
     std::string typed;
 };
-
-bool is_space(char c) {
-    return c == ' ' || c == '\t' || c == '\n' || c == '\r';
-}
-
-bool is_digit(char c) {
-    return c >= '0' && c <= '9';
-}
-
-Error refusal(MessageId id, std::optional<std::size_t> place, std::vector<Argument> arguments = {}) {
-    return Error{ErrorKind::Input, Message{id, std::move(arguments)}, place};
-}
 
 Argument term_number(std::size_t index) {
     return count_argument(static_cast<std::int64_t>(index + 1));
@@ -115,14 +107,14 @@ Result<std::vector<Token>> split(std::string_view text) {
     for (const char separator : {':', ';'})
         if (text.find(separator) != std::string_view::npos) {
             if (comma != std::string_view::npos)
-                return refusal(MessageId::RatioDecimalComma, comma);
+                return refusal_at(MessageId::RatioDecimalComma, comma);
             return split_at(text, separator);
         }
     if (comma == std::string_view::npos)
         return split_at_blanks(text);
     std::vector<Token> tokens = split_at(text, ',');
     if (commas_look_decimal(text, tokens))
-        return refusal(MessageId::RatioDecimalComma, comma);
+        return refusal_at(MessageId::RatioDecimalComma, comma);
     return tokens;
 }
 
@@ -155,11 +147,11 @@ std::optional<Exact> read_decimal(std::string_view text, std::string& tidy) {
 
 Error not_a_weight(const Token& token, std::size_t index) {
     if (token.text.empty())
-        return refusal(MessageId::RatioTermMissing, token.place, {term_number(index)});
+        return refusal_at(MessageId::RatioTermMissing, token.place, {term_number(index)});
     const std::string shown(token.text.substr(0, kLongestTerm));
     if (token.text.front() == '-' || token.text.substr(0, 3) == "\xE2\x88\x92") // a typographic minus
-        return refusal(MessageId::RatioNegativeTerm, token.place, {term_number(index), text_argument(shown)});
-    return refusal(MessageId::RatioNotANumber, token.place, {term_number(index), text_argument(shown)});
+        return refusal_at(MessageId::RatioNegativeTerm, token.place, {term_number(index), text_argument(shown)});
+    return refusal_at(MessageId::RatioNotANumber, token.place, {term_number(index), text_argument(shown)});
 }
 
 Result<Term> read_fraction(const Token& token, std::size_t index) {
@@ -171,14 +163,14 @@ Result<Term> read_fraction(const Token& token, std::size_t index) {
     const std::string numerator = without_leading_zeros(over);
     const std::string denominator = without_leading_zeros(under);
     if (denominator == "0")
-        return refusal(MessageId::RatioZeroDenominator, token.place,
-                       {term_number(index), text_argument(std::string(token.text))});
+        return refusal_at(MessageId::RatioZeroDenominator, token.place,
+                          {term_number(index), text_argument(std::string(token.text))});
     return Term{Exact(Whole(numerator), Whole(denominator)), Form::Fraction, numerator + "/" + denominator};
 }
 
 Result<Term> read_term(const Token& token, std::size_t index) {
     if (token.text.size() > kLongestTerm && is_digit(token.text.front()))
-        return refusal(MessageId::RatioTooFine, token.place);
+        return refusal_at(MessageId::RatioTooFine, token.place);
     if (token.text.find('/') != std::string_view::npos)
         return read_fraction(token, index);
     Term term;
@@ -208,8 +200,8 @@ Result<std::vector<Term>> read_terms(const std::vector<Token>& tokens) {
             return term.error();
         const bool percentage = term.value().form == Form::Percentage;
         if (i > 0 && percentage != (terms.front().form == Form::Percentage))
-            return refusal(MessageId::RatioMixedPercentages, tokens[i].place,
-                           {term_number(i), text_argument(std::string(tokens[i].text))});
+            return refusal_at(MessageId::RatioMixedPercentages, tokens[i].place,
+                              {term_number(i), text_argument(std::string(tokens[i].text))});
         terms.push_back(std::move(term).value());
     }
     return terms;
@@ -271,25 +263,25 @@ std::vector<Message> sum_warnings(const std::vector<Term>& terms) {
 
 Result<Ratio> read_ratio(std::string_view text) {
     if (trimmed(text, 0, text.size()).text.empty())
-        return refusal(MessageId::RatioEmpty, 0);
+        return refusal_at(MessageId::RatioEmpty, 0);
     const Result<std::vector<Token>> tokens = split(text);
     if (!tokens)
         return tokens.error();
     if (tokens.value().size() > kMostTerms)
-        return refusal(MessageId::RatioTooManyTerms, tokens.value()[kMostTerms].place,
-                       {count_argument(static_cast<std::int64_t>(tokens.value().size()))});
+        return refusal_at(MessageId::RatioTooManyTerms, tokens.value()[kMostTerms].place,
+                          {count_argument(static_cast<std::int64_t>(tokens.value().size()))});
     const Result<std::vector<Term>> terms = read_terms(tokens.value());
     if (!terms)
         return terms.error();
     const std::size_t place = tokens.value().front().place;
     if (terms.value().size() < 2)
-        return refusal(MessageId::RatioTooFewTerms, place);
+        return refusal_at(MessageId::RatioTooFewTerms, place);
     if (std::all_of(terms.value().begin(), terms.value().end(), [](const Term& term) { return term.value == 0; }))
-        return refusal(MessageId::RatioAllZero, place);
+        return refusal_at(MessageId::RatioAllZero, place);
     Ratio ratio;
     ratio.weights_ = lowest_terms(terms.value());
     if (ratio.weights_.empty())
-        return refusal(MessageId::RatioTooFine, place);
+        return refusal_at(MessageId::RatioTooFine, place);
     ratio.total_ = std::accumulate(ratio.weights_.begin(), ratio.weights_.end(), std::int64_t{0});
     for (const Term& term : terms.value())
         ratio.typed_.push_back(term.typed);
