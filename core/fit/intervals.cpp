@@ -9,8 +9,8 @@
 namespace filial::fit {
 namespace {
 
-constexpr int kMostSteps = 60;
-constexpr double kLastStep = 1e-8;
+constexpr int kMostLimitSteps = 60;
+constexpr double kLastLimitStep = 1e-8;
 
 // A share with its complement, so that either keeps its digits near 0.
 struct Share {
@@ -37,13 +37,13 @@ Share lower_limit(std::int64_t x, std::int64_t n, double tail) {
     }
     const double goal = std::log(tail);
     double logit = first_logit(x, n, numeric::normal_critical(tail));
-    for (int step = 0; step < kMostSteps; ++step) {
+    for (int step = 0; step < kMostLimitSteps; ++step) {
         const Share share = share_at(logit);
         const Binomial binomial(n, share.p, share.q);
         const double over = binomial.upper_tail_over_term(x);
         const double lacking = goal - binomial.log_pmf(x) - std::log(over);
         logit += lacking * over / (static_cast<double>(x) * share.q);
-        if (std::abs(lacking) < kLastStep) // the next would be its square
+        if (std::abs(lacking) < kLastLimitStep) // the next would be its square
             break;
     }
     return share_at(logit);

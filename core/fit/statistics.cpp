@@ -8,8 +8,6 @@
 namespace filial::fit {
 namespace {
 
-constexpr double kInfinity = std::numeric_limits<double>::infinity();
-
 // What stands in the way of a chi-square P; NotComputed where nothing does.
 MessageId obstacle(const TestSituation& situation) {
     if (situation.df < 1)
@@ -85,8 +83,8 @@ Maybe<ChiSquare> chi_square_test(const Sample& sample, const TestSituation& situ
         return plain_message(MessageId::FitNoPlants);
     ChiSquare result;
     if (impossible(sample)) {
-        result.statistic = kInfinity;
-        result.p = Tail{0.0, -kInfinity};
+        result.statistic = numeric::kInfinity;
+        result.p = Tail{0.0, -numeric::kInfinity};
         result.p_too_close = plain_message(MessageId::FitForbiddenSeen);
         return result;
     }
@@ -110,8 +108,8 @@ Maybe<LikelihoodRatio> likelihood_ratio_test(const Sample& sample, const TestSit
         result.williams_p = result.williams_general_p = plain_message(id);
     };
     if (impossible(sample)) {
-        result.statistic = kInfinity;
-        result.p = Tail{0.0, -kInfinity};
+        result.statistic = numeric::kInfinity;
+        result.p = Tail{0.0, -numeric::kInfinity};
         no_williams(MessageId::FitForbiddenSeen);
         return result;
     }
