@@ -91,17 +91,17 @@ void NewCrossPage::build() {
     acts->setSpacing(space::kM);
     create_ = new QPushButton(tr("Begin counting"));
     setLook(create_, look::kPrimary);
-    auto* cancel = new QPushButton(tr("Cancel"));
+    cancel_ = new QPushButton(tr("Cancel"));
     problem_ = new QLabel;
     problem_->setWordWrap(true);
     setInk(problem_, Ink::Muted);
     acts->addWidget(create_);
-    acts->addWidget(cancel);
+    acts->addWidget(cancel_);
     acts->addWidget(problem_, 1);
     column->addLayout(acts);
     column->addStretch(1);
     connect(create_, &QPushButton::clicked, this, &NewCrossPage::answered);
-    connect(cancel, &QPushButton::clicked, this, &NewCrossPage::cancelled);
+    connect(cancel_, &QPushButton::clicked, this, &NewCrossPage::cancelled);
     setWidget(page);
 }
 
@@ -179,6 +179,7 @@ void NewCrossPage::addTrait(const QString& name, const QString& levels) {
     row->addWidget(levelsEdit, 3);
     traitRows_->addWidget(box);
     rows_.append({box, nameEdit, levelsEdit});
+    orderTabs();
     for (QLineEdit* edit : {nameEdit, levelsEdit}) {
         connect(edit, &QLineEdit::textEdited, this, &NewCrossPage::follow);
         connect(edit, &QLineEdit::returnPressed, this, [this] {
@@ -186,6 +187,18 @@ void NewCrossPage::addTrait(const QString& name, const QString& levels) {
                 Q_EMIT answered();
         });
     }
+}
+
+void NewCrossPage::orderTabs() {
+    // Rows are made after the buttons below them, but are gone through before.
+    QList<QWidget*> order{first_, second_};
+    for (QAbstractButton* choice : generations_->buttons())
+        order << choice;
+    for (const TraitRow& row : rows_)
+        order << row.name << row.levels;
+    order << more_ << create_ << cancel_;
+    for (qsizetype i = 1; i < order.size(); ++i)
+        setTabOrder(order[i - 1], order[i]);
 }
 
 std::vector<book::Trait> NewCrossPage::traits() const {

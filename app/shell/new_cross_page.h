@@ -44,6 +44,7 @@ private:
     QWidget* generationQuestion();
     QWidget* classesQuestion();
     void addTrait(const QString& name, const QString& levels);
+    void orderTabs();
     void follow(); ///< lists the classes again and says what is missing
     std::vector<book::Trait> traits() const;
     QString generation() const;
@@ -58,6 +59,7 @@ private:
     ClassPreview* preview_ = nullptr;
     QLabel* problem_ = nullptr;
     QPushButton* create_ = nullptr;
+    QPushButton* cancel_ = nullptr;
 };
 
 } // namespace filial::app
