@@ -3,12 +3,14 @@
 
 #include <QPainter>
 
+#include "app/common/help_page.h"
 #include "app/common/theme.h"
 
 namespace filial::app {
 
 HypothesisBlank::HypothesisBlank(QWidget* parent) : QPushButton(parent) {
     setObjectName("hypothesis-blank");
+    setProperty(kHelpPage, "hypotheses.md");
     setFont(app::font(TextRole::Verdict));
     setCursor(Qt::PointingHandCursor);
     setAttribute(Qt::WA_Hover);

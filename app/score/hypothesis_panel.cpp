@@ -8,6 +8,7 @@
 #include <QKeyEvent>
 #include <QPainter>
 
+#include "app/common/help_page.h"
 #include "app/common/text.h"
 
 namespace filial::app {
@@ -79,6 +80,7 @@ HypothesisPanel::~HypothesisPanel() {
 
 void HypothesisPanel::build() {
     setObjectName("hypothesis-panel");
+    setProperty(kHelpPage, "hypotheses.md");
     setAccessibleName(tr("Choose what the counts are tested against"));
     field_->setObjectName("hypothesis-field");
     field_->setAccessibleName(tr("Ratio, cross, or words to search for"));
@@ -261,11 +263,16 @@ void HypothesisPanel::showVerdict() {
     else if (candidate_ && analysis.totals)
         text = say(analysis.totals->verdict_sentence);
     verdict_->say(text);
-    use_->setEnabled(candidate_.has_value());
+    use_->setEnabled(usable());
+}
+
+bool HypothesisPanel::usable() const {
+    const book::Cross* cross = workbook_->currentCross();
+    return cross != nullptr && candidate_ && candidate_->class_count() == cross->classes.size();
 }
 
 void HypothesisPanel::accept() {
-    if (!isVisible() || !candidate_ || workbook_->currentCross() == nullptr)
+    if (!isVisible() || !usable())
         return;
     const book::Cross& cross = *workbook_->currentCross();
     const book::HypothesisUse after = use();

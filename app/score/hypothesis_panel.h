@@ -57,6 +57,7 @@ private:
     book::HypothesisUse use() const;
     void preview();
     void showVerdict();
+    bool usable() const; ///< a hypothesis with one term for each class
     void moveRow(int by);
     void close();
 

@@ -3,6 +3,7 @@
 
 #include <QScrollBar>
 
+#include "app/common/help_page.h"
 #include "app/common/text.h"
 
 namespace filial::app {
@@ -44,6 +45,7 @@ MeaningColumn::MeaningColumn(ScoreView* view, QWidget* parent)
 
 void MeaningColumn::build() {
     setObjectName("meaning-column");
+    families_->setProperty(kHelpPage, "heterogeneity.md");
     setAccessibleName(tr("What the counts mean"));
     setFrameShape(QFrame::NoFrame);
     setWidgetResizable(true);

@@ -8,6 +8,7 @@
 #include <QTextBrowser>
 #include <QVBoxLayout>
 
+#include "app/common/help_page.h"
 #include "app/common/theme.h"
 #include "app/common/version.h"
 #include "core/report/cross_report.h"
@@ -65,9 +66,19 @@ QString HelpPanel::aboutFocus(const QWidget* focus) {
     return {};
 }
 
-void HelpPanel::showFor(const QString& about) {
+QString HelpPanel::pageFor(const QWidget* focus) {
+    for (const QWidget* one = focus; one != nullptr; one = one->parentWidget())
+        if (const QString page = one->property(kHelpPage).toString(); !page.isEmpty())
+            return page;
+    return QStringLiteral("goodness-of-fit.md");
+}
+
+void HelpPanel::showFor(const QWidget* focus) {
+    const QString about = aboutFocus(focus);
     about_->setText(about);
     about_->setVisible(!about.isEmpty());
+    const int page = pages_->findData(pageFor(focus));
+    pages_->setCurrentIndex(page < 0 ? 0 : page);
     showPage(pages_->currentIndex());
     show();
     raise();

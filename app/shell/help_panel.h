@@ -16,7 +16,9 @@ public:
     explicit HelpPanel(QWidget* parent);
     /// What a widget, or the nearest one around it, says about itself.
     static QString aboutFocus(const QWidget* focus);
-    void showFor(const QString& about);
+    /// The page on a widget or what is around it; on the test of the counts where none is named.
+    static QString pageFor(const QWidget* focus);
+    void showFor(const QWidget* focus);
     void showAbout();
     QString text() const;
 

@@ -172,10 +172,10 @@ void Window::followMenu() {
 }
 
 void Window::help() {
-    const QString about = HelpPanel::aboutFocus(QApplication::focusWidget());
+    const QWidget* focus = QApplication::focusWidget();
     if (help_ == nullptr)
         help_ = new HelpPanel(this);
-    help_->showFor(about);
+    help_->showFor(focus);
 }
 
 void Window::about() {
