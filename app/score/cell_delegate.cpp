@@ -1,6 +1,10 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/score/cell_delegate.h"
 
+#include <algorithm>
+#include <array>
+
+#include <QCoreApplication>
 #include <QKeyEvent>
 #include <QPainter>
 
@@ -119,6 +123,13 @@ void CellDelegate::updateEditorGeometry(QWidget* editor, const QStyleOptionViewI
                         std::min(option.rect.height(), kRowHeight));
 }
 
+bool CellDelegate::leavesCell(const QKeyEvent& key) const {
+    static constexpr std::array kMoves{Qt::Key_Left, Qt::Key_Right, Qt::Key_Up,
+                                       Qt::Key_Down, Qt::Key_Home,  Qt::Key_End};
+    const bool plain = (key.modifiers() & ~Qt::KeypadModifier) == Qt::NoModifier;
+    return plain && table_->typedOver() && std::find(kMoves.begin(), kMoves.end(), key.key()) != kMoves.end();
+}
+
 bool CellDelegate::eventFilter(QObject* object, QEvent* event) {
     auto* editor = qobject_cast<QWidget*>(object);
     if (editor == nullptr || event->type() != QEvent::KeyPress)
@@ -126,6 +137,12 @@ bool CellDelegate::eventFilter(QObject* object, QEvent* event) {
     const auto* key = static_cast<QKeyEvent*>(event); // NOLINT: the type was asked for above
     int rows = 0, columns = 0;
     bool enter = false;
+    if (leavesCell(*key)) {
+        Q_EMIT commitData(editor);
+        Q_EMIT closeEditor(editor, NoHint);
+        QCoreApplication::sendEvent(table_, event); // the table moves as it does without an editor
+        return true;
+    }
     switch (key->key()) {
     case Qt::Key_Return:
     case Qt::Key_Enter:
@@ -137,6 +154,9 @@ bool CellDelegate::eventFilter(QObject* object, QEvent* event) {
     case Qt::Key_Backtab:
         columns = -1;
         break;
+    case Qt::Key_F2:
+        table_->editWithCaret();
+        return true;
     case Qt::Key_Up:
         rows = -1;
         break;

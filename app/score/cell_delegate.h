@@ -40,6 +40,8 @@ protected:
     bool eventFilter(QObject* object, QEvent* event) override;
 
 private:
+    bool leavesCell(const QKeyEvent& key) const; ///< a key that moves on, once a count is typed over the old one
+
     FamilyTable* table_;
 };
 

@@ -10,6 +10,7 @@
 #include <QPainter>
 #include <QScrollBar>
 
+#include "app/common/help_page.h"
 #include "app/score/cell_delegate.h"
 
 namespace filial::app {
@@ -18,6 +19,7 @@ FamilyTable::FamilyTable(Workbook* workbook, FamilyModel* model, QWidget* parent
     : QTableView(parent), workbook_(workbook), model_(model), header_(new ClassHeader(workbook, model, this)) {
     setObjectName("family-table");
     setAccessibleName(tr("Families and their counts"));
+    setProperty(kHelpPage, "keys.md");
     setHorizontalHeader(header_);
     setModel(model_);
     setItemDelegate(new CellDelegate(this));
@@ -242,6 +244,12 @@ void FamilyTable::selectionChanged(const QItemSelection& selected, const QItemSe
     }
     if (chosen != workbook_->selectedFamilies())
         workbook_->setSelectedFamilies(std::move(chosen));
+}
+
+bool FamilyTable::edit(const QModelIndex& index, EditTrigger trigger, QEvent* event) {
+    if (state() != EditingState)
+        typed_over_ = trigger == AnyKeyPressed;
+    return QTableView::edit(index, trigger, event);
 }
 
 void FamilyTable::closeEditor(QWidget* editor, QAbstractItemDelegate::EndEditHint hint) {

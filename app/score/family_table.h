@@ -34,6 +34,8 @@ public:
     void step(int rows, int columns); ///< moves the current cell; Tab wraps at the row's end
     void enter();                     ///< down, to the column where a run of Tabs began; in the last row adds a family
     void startReason();
+    bool typedOver() const { return typed_over_; } ///< the open edit began by typing, so arrows leave the cell
+    void editWithCaret() { typed_over_ = false; }  ///< from here arrows move within the text
 
 Q_SIGNALS:
     void heightChanged(); ///< more or fewer rows, or one grew
@@ -47,6 +49,7 @@ protected:
     void contextMenuEvent(QContextMenuEvent* event) override;
     void selectionChanged(const QItemSelection& selected, const QItemSelection& deselected) override;
     bool focusNextPrevChild(bool next) override;
+    bool edit(const QModelIndex& index, EditTrigger trigger, QEvent* event) override;
     void closeEditor(QWidget* editor, QAbstractItemDelegate::EndEditHint hint) override;
     bool eventFilter(QObject* object, QEvent* event) override;
 
@@ -79,6 +82,7 @@ private:
     QLineEdit* reason_ = nullptr;
     int reason_row_ = -1;
     bool sown_ = false;
+    bool typed_over_ = false;
     int width_ = 0; ///< last shared among the columns
 };
 

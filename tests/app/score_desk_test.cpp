@@ -20,6 +20,7 @@
 #include "app/common/theme.h"
 #include "app/score/family_model.h"
 #include "app/score/score_desk.h"
+#include "app/shell/help_panel.h"
 #include "tests/support/reference.h"
 
 /// Readable failures.
@@ -170,6 +171,79 @@ TEST_F(ScoreDeskTest, EveryKeyIsSeenAtOnceAndEscapeRestores) {
     press(Qt::Key_Escape);
     EXPECT_EQ(words("chi-square-statistic"), before);
     EXPECT_EQ(cell(0, 1), "45");
+}
+
+TEST_F(ScoreDeskTest, ArrowsLeaveACellThatIsBeingTyped) {
+    open(seedCross());
+    type("12");
+    press(Qt::Key_Right);
+    type("7");
+    press(Qt::Key_Left);
+    EXPECT_EQ(cell(0, 1), "12");
+    EXPECT_EQ(cell(0, 2), "7");
+    EXPECT_EQ(table_->currentIndex().column(), 1);
+    type("14");
+    press(Qt::Key_Down);
+    EXPECT_EQ(cell(0, 1), "14");
+    EXPECT_EQ(table_->currentIndex().row(), 1);
+    type("31");
+    press(Qt::Key_Home);
+    EXPECT_EQ(cell(1, 1), "31");
+    EXPECT_EQ(table_->currentIndex().column(), 0);
+}
+
+TEST_F(ScoreDeskTest, ArrowsMoveTheCaretInACellOpenedByF2) {
+    open(seedCross());
+    type("12");
+    press(Qt::Key_Return);
+    goTo(0, 1);
+    press(Qt::Key_F2);
+    press(Qt::Key_Home);
+    press(Qt::Key_Right);
+    type("7");
+    press(Qt::Key_Return);
+    EXPECT_EQ(cell(0, 1), "172");
+    goTo(1, 1);
+    type("13");
+    press(Qt::Key_F2); // from typing to the caret, without leaving the cell
+    press(Qt::Key_Left);
+    type("0");
+    press(Qt::Key_Return);
+    EXPECT_EQ(cell(1, 1), "103");
+}
+
+TEST_F(ScoreDeskTest, AHypothesisOfTheWrongLengthIsNotTaken) {
+    open(seedCross());
+    typeTenPlants();
+    QTest::mouseClick(window_->findChild<QPushButton*>("hypothesis-blank"), Qt::LeftButton);
+    auto* field = window_->findChild<QLineEdit*>("hypothesis-field");
+    auto* use = window_->findChild<QPushButton*>("use-hypothesis");
+    field->selectAll();
+    type("9:3:3:1");
+    EXPECT_FALSE(use->isEnabled());
+    EXPECT_FALSE(words("preview-verdict").isEmpty()) << "why is said";
+    press(Qt::Key_Return);
+    EXPECT_EQ(cross().hypothesis.notation, "3:1");
+    EXPECT_TRUE(field->isVisible()) << "it waits for a ratio that fits";
+    field->selectAll();
+    type("1:1");
+    EXPECT_TRUE(use->isEnabled());
+    press(Qt::Key_Return);
+    EXPECT_EQ(cross().hypothesis.notation, "1:1");
+}
+
+TEST_F(ScoreDeskTest, HelpKnowsItsPageFromTheFocus) {
+    open(seedCross());
+    typeTenPlants();
+    goTo(0, 1);
+    EXPECT_EQ(HelpPanel::pageFor(QApplication::focusWidget()), "keys.md");
+    type("4");
+    EXPECT_EQ(HelpPanel::pageFor(QApplication::focusWidget()), "keys.md") << "also while a count is typed";
+    press(Qt::Key_Escape);
+    QTest::mouseClick(window_->findChild<QPushButton*>("hypothesis-blank"), Qt::LeftButton);
+    EXPECT_EQ(HelpPanel::pageFor(QApplication::focusWidget()), "hypotheses.md");
+    EXPECT_EQ(HelpPanel::pageFor(window_->findChild<QPushButton*>("families-title")), "heterogeneity.md");
+    EXPECT_EQ(HelpPanel::pageFor(window_->findChild<QPushButton*>("fit-title")), "goodness-of-fit.md");
 }
 
 TEST_F(ScoreDeskTest, SumsDashesAndBlanksAreThreeThings) {

@@ -11,6 +11,7 @@
 #include <QSet>
 #include <QSignalSpy>
 
+#include "app/common/help_page.h"
 #include "app/shell/cross_acts.h"
 #include "app/shell/drawer.h"
 #include "app/shell/new_cross_page.h"
@@ -56,6 +57,52 @@ TEST_F(WindowTest, NewCrossByKeyboard) {
     window.workbook()->undo();
     EXPECT_EQ(window.workbook()->currentCross(), nullptr);
     answers_.choice = 2;
+}
+
+TEST_F(WindowTest, TabGoesThroughANewCrossAsItIsRead) {
+    Window window;
+    showAt(window, 1360, 860);
+    window.activateWindow();
+    ASSERT_TRUE(QTest::qWaitForWindowActive(&window));
+    window.newCross();
+    QStringList passed;
+    const auto note = [&passed] {
+        QWidget* focus = QApplication::focusWidget();
+        const auto* button = qobject_cast<QAbstractButton*>(focus);
+        passed << (button != nullptr ? button->text() : focus->accessibleName());
+    };
+    ASSERT_TRUE(waitFor([] { return qobject_cast<QLineEdit*>(QApplication::focusWidget()) != nullptr; }));
+    note();
+    for (int i = 0; i < 3; ++i) {
+        QTest::keyClick(QApplication::focusWidget(), Qt::Key_Tab);
+        note();
+    }
+    QTest::keyClicks(QApplication::focusWidget(), "stem");
+    QTest::keyClick(QApplication::focusWidget(), Qt::Key_Tab);
+    note();
+    QTest::keyClicks(QApplication::focusWidget(), "purple, green");
+    for (int i = 0; i < 3; ++i) {
+        QTest::keyClick(QApplication::focusWidget(), Qt::Key_Tab);
+        note();
+    }
+    EXPECT_EQ(passed, QStringList({"First parent", "Second parent", "F2", "Trait 1", "Levels of trait 1",
+                                   "Another trait", "Begin counting", "Cancel"}))
+        << passed.join(" | ").toStdString();
+}
+
+TEST_F(WindowTest, HelpLeavesAboutForThePageOfTheFocus) {
+    Window window;
+    HelpPanel panel(&window);
+    panel.showAbout();
+    QWidget field;
+    field.setProperty(kHelpPage, "hypotheses.md");
+    panel.showFor(&field);
+    EXPECT_FALSE(panel.text().contains("GPL-3.0-or-later"));
+    QFile page(":/help/hypotheses.md");
+    ASSERT_TRUE(page.open(QIODevice::ReadOnly));
+    const QString title = QString::fromUtf8(page.readAll()).section("# ", 1).section('\n', 0, 0).trimmed();
+    ASSERT_FALSE(title.isEmpty());
+    EXPECT_TRUE(panel.text().startsWith(title)) << panel.text().left(40).toStdString();
 }
 
 TEST_F(WindowTest, ProposesTheRatiosOfTheTextbooks) {
