@@ -33,6 +33,7 @@ private:
     void actOn(std::size_t caution);
     void build();
     void refresh();
+    QString nothingTested() const; ///< what is missing for a test
     void refreshFit(const report::CrossAnalysis& analysis);
     void refreshFamilies(const report::CrossAnalysis& analysis);
     void refreshCautions(const report::CrossAnalysis& analysis);

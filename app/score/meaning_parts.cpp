@@ -44,11 +44,22 @@ QString signedCharge(int charge) {
 
 } // namespace
 
+QString MeaningColumn::nothingTested() const {
+    const book::Cross* cross = view_->workbook()->shownCross();
+    const bool counted = cross != nullptr && std::any_of(cross->families.begin(), cross->families.end(),
+                                                         [cross](const book::Family& family) {
+                                                             return !family.blank(cross->classes.size());
+                                                         });
+    return counted && cross->hypothesis.notation.empty() ? tr("Choose a ratio to test against.")
+                                                         : tr("No counts yet. Type the first family in the table.");
+}
+
 void MeaningColumn::refreshFit(const report::CrossAnalysis& analysis) {
     if (!analysis.totals) {
-        const QString why = analysis.hypothesis_error ? say(analysis.hypothesis_error->message)
-                            : analysis.error          ? say(analysis.error->message)
-                                                      : tr("No counts yet. Type the first family in the table.");
+        const bool chosen = analysis.hypothesis_error && !view_->workbook()->shownCross()->hypothesis.notation.empty();
+        const QString why = chosen           ? say(analysis.hypothesis_error->message)
+                            : analysis.error ? say(analysis.error->message)
+                                             : nothingTested();
         verdict_->say(why);
         tests_->setRows({});
         meaning_->say({});

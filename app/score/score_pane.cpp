@@ -296,10 +296,13 @@ void ScorePane::arrangeHead(int left, int width) {
         sown_->move(right - sownWidth, top);
     const int room = sown_->x() - space::kM - left;
     const int blankWidth = std::min(blank_->sizeHint().width(), std::max(80, room - againstWidth - 100));
-    const int nameWidth =
-        workbook_->shownCross() == nullptr ? width : std::clamp(room - againstWidth - blankWidth - 22, 60, wanted);
-    name_->say(metrics.elidedText(name, Qt::ElideRight, nameWidth), name);
-    name_->setGeometry(left, top, nameWidth, 32);
+    const int nameWidth = workbook_->shownCross() == nullptr
+                              ? width
+                              : std::clamp(room - againstWidth - blankWidth - 22, std::min(60, wanted), wanted);
+    const QString shown = metrics.elidedText(name, Qt::ElideRight, nameWidth);
+    name_->say(shown, name);
+    // No wider than its letters: what follows stands beside them.
+    name_->setGeometry(left, top, std::min(nameWidth, metrics.horizontalAdvance(shown) + 1), 32);
     against_->setGeometry(name_->x() + name_->width() + 14, top, againstWidth, 32);
     blank_->setGeometry(against_->x() + againstWidth + 6, top, blankWidth, 32);
     const bool joinable = table_->classHeader()->chosenClasses().size() >= 2;
@@ -329,9 +332,11 @@ void ScorePane::arrange() {
     const bool noted = !notes_->text().isEmpty();
     const int notesHeight = noted ? 22 : 0;
     const int pictureLeast = height() < 560 ? 96 : 150;
-    const int below = totals_->height() + notesHeight + 30 + pictureLeast;
+    // A low window folds the picture away before the counts.
+    const bool pictured = bottom - y - totals_->height() - notesHeight >= 30 + pictureLeast + 96;
+    const int below = totals_->height() + notesHeight + space::kXs + (pictured ? 26 + pictureLeast : 0);
     table_->layOutColumns(width);
-    const int tableHeight = std::clamp(table_->contentHeight(), 120, std::max(120, bottom - y - below));
+    const int tableHeight = std::clamp(table_->contentHeight(), 96, std::max(96, bottom - y - below));
     // A scroll bar takes its width from the columns, so that nothing hides under it.
     const bool scrolls = table_->contentHeight() > tableHeight;
     if (scrolls)
@@ -357,7 +362,16 @@ void ScorePane::arrange() {
     map_->setGeometry(picture);
     chart_->setGeometry(picture);
     twin_->setGeometry(picture);
-    map_->setVisible(show_map_->isChecked() && !as_table_->isChecked());
+    for (QWidget* button : std::initializer_list<QWidget*>{show_map_, show_chart_, as_table_})
+        button->setVisible(pictured);
+    map_->setVisible(pictured && show_map_->isChecked() && !as_table_->isChecked());
+    const bool stale = !chart_->isVisible() && !twin_->isVisible();
+    chart_->setVisible(pictured && show_chart_->isChecked() && !as_table_->isChecked());
+    twin_->setVisible(pictured && as_table_->isChecked());
+    if (stale && chart_->isVisible())
+        refreshChart();
+    if (stale && twin_->isVisible())
+        refreshTwin();
     if (panel_->isVisible())
         panel_->place(blank_->geometry());
 }

@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "app/shell/drawer.h"
 
+#include <algorithm>
+
 #include <QPainter>
 #include <QPushButton>
 #include <QVBoxLayout>
@@ -69,7 +71,8 @@ void Drawer::setOpen(bool open) {
     open_ = open;
     if (column_ != nullptr)
         column_->setVisible(open);
-    setFixedHeight(open ? kOpenHeight : kLine);
+    // In a low window it leaves room for the totals above it.
+    setFixedHeight(open ? std::clamp(window()->height() * 2 / 5, kLine + 100, kOpenHeight) : kLine);
     dress();
 }
 

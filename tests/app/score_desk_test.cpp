@@ -232,6 +232,32 @@ TEST_F(ScoreDeskTest, AHypothesisOfTheWrongLengthIsNotTaken) {
     EXPECT_EQ(cross().hypothesis.notation, "1:1");
 }
 
+TEST_F(ScoreDeskTest, CountsWithoutARatioAskForOne) {
+    book::Cross cross = seedCross();
+    cross.hypothesis.notation.clear();
+    open(cross);
+    EXPECT_TRUE(words("verdict").startsWith("No counts yet"));
+    type("12");
+    press(Qt::Key_Tab);
+    type("5");
+    press(Qt::Key_Return);
+    EXPECT_EQ(words("verdict"), "Choose a ratio to test against.");
+}
+
+TEST_F(ScoreDeskTest, ALowWindowFoldsThePictureBeforeTheCounts) {
+    open(seedCross());
+    typeTenPlants();
+    const auto* map = window_->findChild<QWidget*>("departure-map");
+    const auto* totals = window_->findChild<QTableView*>("totals-table");
+    EXPECT_TRUE(map->isVisible());
+    window_->resize(1010, 320);
+    ASSERT_TRUE(QTest::qWaitFor([&] { return !map->isVisible(); }));
+    EXPECT_LE(totals->geometry().bottom(), desk_->middle()->height());
+    EXPECT_GT(table_->height(), 64);
+    window_->resize(1148, 812);
+    EXPECT_TRUE(QTest::qWaitFor([&] { return map->isVisible(); }));
+}
+
 TEST_F(ScoreDeskTest, HelpKnowsItsPageFromTheFocus) {
     open(seedCross());
     typeTenPlants();
