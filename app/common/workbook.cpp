@@ -144,19 +144,35 @@ bool Workbook::perform(book::Edit edit, const QString& mergeKey) {
     return true;
 }
 
+void Workbook::goToChange(const std::vector<book::Cross>& before) {
+    const auto changed = [&before](const book::Cross& now) {
+        return std::none_of(before.begin(), before.end(), [&now](const book::Cross& one) { return one == now; });
+    };
+    if (currentCross() == nullptr || changed(*currentCross()))
+        return;
+    const auto& crosses = book().crosses;
+    const auto found = std::find_if(crosses.begin(), crosses.end(), changed);
+    if (found != crosses.end())
+        setCurrentCross(book::Id(found->id));
+}
+
 void Workbook::undo() {
+    const std::vector<book::Cross> before = book().crosses;
     const auto message = p_->session->undo();
     if (!message)
         return;
     afterChange();
+    goToChange(before);
     Q_EMIT said(tr("Undid: %1").arg(say(*message)));
 }
 
 void Workbook::redo() {
+    const std::vector<book::Cross> before = book().crosses;
     const auto message = p_->session->redo();
     if (!message)
         return;
     afterChange();
+    goToChange(before);
     Q_EMIT said(tr("Redid: %1").arg(say(*message)));
 }
 

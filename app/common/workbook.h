@@ -76,6 +76,7 @@ private:
     void outdateAnalysis();
     report::AnalysisOptions analysisOptions() const;
     void rememberPlace();
+    void goToChange(const std::vector<book::Cross>& before); ///< shows the cross that undo or redo changed
     bool tell(const Done& result, const QString& sentence);
     struct Private;
     std::unique_ptr<Private> p_;

@@ -58,7 +58,7 @@ Window::Window(QWidget* parent)
     pages_->addWidget(questions_);
     pages_->addWidget(settings_);
     setAcceptDrops(true);
-    setMinimumSize(620, 480);
+    setMinimumSize(620, 400);
     connect(start_, &StartPage::newCrossWanted, this, &Window::newCross);
     connect(start_, &StartPage::openWanted, this, &Window::open);
     connect(start_, &StartPage::sampleChosen, this, &Window::openSample);
@@ -114,6 +114,7 @@ void Window::say(const QString& sentence) {
 
 void Window::refuse(const QString& sentence) {
     notice_->show(NoticeBar::Kind::Error, sentence);
+    passing_ = false;
 }
 
 QString Window::savedState() const {
@@ -152,7 +153,11 @@ void Window::showBook(std::unique_ptr<Workbook> workbook) {
     connect(view_, &BookView::newCrossWanted, this, &Window::newCross);
     connect(view_, &BookView::leftWidthChanged, bar_, &TopBar::setLeftWidth);
     connect(workbook_.get(), &Workbook::said, this, &Window::say);
-    connect(workbook_.get(), &Workbook::refused, this, &Window::refuse);
+    connect(workbook_.get(), &Workbook::refused, this, [this](const QString& sentence) {
+        refuse(sentence);
+        passing_ = true;
+    });
+    connect(workbook_.get(), &Workbook::bookChanged, this, &Window::followEdit);
     connect(workbook_.get(), &Workbook::savedStateChanged, this, &Window::followSavedState);
     connect(workbook_.get(), &Workbook::bookChanged, this, &Window::followBook);
     connect(workbook_.get(), &Workbook::bookChanged, this, &Window::followMenu);
@@ -177,6 +182,14 @@ void Window::followBook() {
     followSavedState();
 }
 
+void Window::followEdit() {
+    // What was said of the edit or the save before no longer holds.
+    status_->clear();
+    if (passing_)
+        notice_->hide();
+    passing_ = false;
+}
+
 void Window::followSavedState() {
     if (workbook_ == nullptr) {
         bar_->setSavedState({}, {});
@@ -189,7 +202,9 @@ void Window::followSavedState() {
                                 : tr("Changes are in memory only: the journal cannot be written.");
     const QString time = savedAt_.isValid() ? QLocale().toString(savedAt_, QLocale::ShortFormat) : QString();
     const QString last = time.isEmpty() ? QString() : tr("Last saved %1.").arg(time);
-    bar_->setSavedState(saved ? tr("Saved") : tr("Not saved yet"),
+    bar_->setSavedState(saved                    ? tr("Saved")
+                        : session.path().empty() ? tr("Not saved yet")
+                                                 : tr("Changes not saved"),
                         saved ? last : QStringList{last, journal}.join(QLatin1Char(' ')).trimmed());
     followMenu();
 }
@@ -205,6 +220,7 @@ void Window::watchJournal() {
     if (journalTold_)
         return;
     journalTold_ = true;
+    passing_ = false;
     notice_->show(NoticeBar::Kind::Warning,
                   tr("The journal cannot be written (%1). Your changes are in this window only: save the book soon.")
                       .arg(app::say(error->message)));

@@ -71,6 +71,7 @@ private:
     void tellOpened();
     void watchJournal();
     void followBook();
+    void followEdit();
     void followSavedState();
     void say(const QString& sentence);
     void refuse(const QString& sentence);
@@ -90,6 +91,7 @@ private:
     QMenu* menu_;
     TopBar* bar_ = nullptr;
     NoticeBar* notice_;
+    bool passing_ = false; ///< the notice is of a refused edit and goes with the next one
     QStackedWidget* pages_;
     StartPage* start_;
     NewCrossPage* questions_;

@@ -73,10 +73,13 @@ void Window::takeSession(OpenedSession opened, bool countsAsSaved) {
 void Window::tellOpened() {
     book::Session& session = workbook_->session();
     notice_->hide();
+    passing_ = false;
     QStringList sentences;
     for (const Message& warning : session.warnings())
         sentences << app::say(warning);
-    if (session.recovered_entries() > 0)
+    if (session.recovered_entries() == 1)
+        sentences << tr("Recovered 1 change that had not been saved. Save the book to keep it, or revert.");
+    else if (session.recovered_entries() > 1)
         sentences << tr("Recovered %1 changes that had not been saved. Save the book to keep them, or revert.")
                          .arg(session.recovered_entries());
     if (session.read_only())
@@ -165,6 +168,8 @@ bool Window::save() {
     const bool saved = workbook_->save();
     if (saved)
         savedAt_ = QDateTime::currentDateTime();
+    else
+        passing_ = false; // a failed save stays said
     followSavedState();
     return saved;
 }
@@ -175,8 +180,12 @@ bool Window::saveAs() {
     const QString suggestion = workbook_->displayName() + QLatin1String(kBookEnding);
     const QString path = withEnding(
         Ask::instance().saveFile(this, tr("Save the book as"), suggestion, tr("Books (*.filial)")), kBookEnding);
-    if (path.isEmpty() || !workbook_->saveAs(path))
+    if (path.isEmpty())
         return false;
+    if (!workbook_->saveAs(path)) {
+        passing_ = false;
+        return false;
+    }
     savedAt_ = QDateTime::currentDateTime();
     rememberBook(path);
     followBook();

@@ -141,7 +141,7 @@ TEST_F(WalkTest, FromTheFirstKeyToTheReport) {
     table->setCurrentIndex(table->model()->index(0, 1));
     type("75"); // 45 plants, digits exchanged: the kind of slip that is undone later
     press(Qt::Key_Return);
-    EXPECT_EQ(window_->savedState(), "Not saved yet");
+    EXPECT_EQ(window_->savedState(), "Changes not saved");
     EXPECT_NE(spoken("chi-square-statistic"), three(expected["pooled"]["chi2"]));
     const std::string slipped = spoken("chi-square-statistic");
     window_->workbook()->session().wait_until_synced();
@@ -232,7 +232,7 @@ TEST_F(WalkTest, ABookInAFolderThatCannotBeWrittenLosesNothing) {
         EXPECT_EQ(window_->workbook()->session().journal_state(), book::JournalState::OnDisk);
         EXPECT_FALSE(window_->save());
         EXPECT_FALSE(window_->notice().isEmpty());
-        EXPECT_EQ(window_->savedState(), "Not saved yet");
+        EXPECT_EQ(window_->savedState(), "Changes not saved");
         window_.reset();
         begin();
         ASSERT_TRUE(window_->openPath(file));

@@ -155,8 +155,8 @@ TEST_F(WindowTest, KeptChangesAreRecoveredAndSaid) {
     Window window;
     ASSERT_TRUE(window.openPath(file));
     EXPECT_EQ(window.workbook()->currentCross()->name, "kept for later");
-    EXPECT_TRUE(window.notice().contains("Recovered")) << window.notice().toStdString();
-    EXPECT_EQ(window.savedState(), "Not saved yet");
+    EXPECT_TRUE(window.notice().contains("Recovered 1 change that")) << window.notice().toStdString();
+    EXPECT_EQ(window.savedState(), "Changes not saved");
     answers_.choice = 2;
     ASSERT_TRUE(window.closeBook());
     ASSERT_TRUE(window.openPath(file));
@@ -209,6 +209,40 @@ TEST_F(WindowTest, UndoAndRedoSayWhat) {
     QTest::keyClick(&window, Qt::Key_Z, Qt::ControlModifier | Qt::ShiftModifier);
     EXPECT_EQ(window.workbook()->currentCross()->name, "bench 4");
     EXPECT_TRUE(window.statusText().startsWith("Redid: "));
+    answers_.choice = 2;
+}
+
+TEST_F(WindowTest, UndoGoesToTheCrossItChanges) {
+    Window window;
+    ASSERT_TRUE(window.openSample(sample("f2-eight-families")));
+    Workbook& workbook = *window.workbook();
+    const book::Id first = workbook.currentCrossId();
+    duplicateCross(&workbook);
+    const book::Id copy = workbook.currentCrossId();
+    ASSERT_NE(copy, first);
+    rename(workbook, "bench 4");
+    workbook.setCurrentCross(first);
+    workbook.undo();
+    EXPECT_EQ(workbook.currentCrossId(), copy);
+    workbook.setCurrentCross(first);
+    workbook.redo();
+    EXPECT_EQ(workbook.currentCrossId(), copy);
+    EXPECT_EQ(workbook.currentCross()->name, "bench 4");
+}
+
+TEST_F(WindowTest, WhatWasSaidOfARefusedEditGoesWithTheNext) {
+    Window window;
+    ASSERT_TRUE(window.openSample(sample("f2-eight-families")));
+    Q_EMIT window.workbook()->refused("three is not a count");
+    EXPECT_FALSE(window.notice().isEmpty());
+    rename(*window.workbook(), "bench 4");
+    EXPECT_TRUE(window.notice().isEmpty());
+    answers_.save = path("spring");
+    ASSERT_TRUE(window.save());
+    EXPECT_EQ(window.statusText(), "Saved as spring.filial");
+    rename(*window.workbook(), "bench 5");
+    EXPECT_TRUE(window.statusText().isEmpty());
+    EXPECT_EQ(window.savedState(), "Changes not saved");
     answers_.choice = 2;
 }
 
