@@ -1,14 +1,26 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #include "core/report/chart_table.h"
 
+#include <algorithm>
+#include <cmath>
+
 #include "core/report/wording.h"
 
 namespace filial::report {
 
 namespace {
 
-std::string value_at(const std::vector<double>& values, std::size_t i) {
-    return i < values.size() ? statistic_text(values[i]) : "–";
+/// Counts are read as counts, without decimals.
+bool counts_only(const Chart::Series& series) {
+    return std::all_of(series.values.begin(), series.values.end(),
+                       [](double value) { return std::trunc(value) == value; });
+}
+
+std::string value_at(const std::vector<double>& values, std::size_t i, bool counts) {
+    if (i >= values.size()) {
+        return "–";
+    }
+    return counts ? fixed_text(values[i], 0) : statistic_text(values[i]);
 }
 
 } // namespace
@@ -28,10 +40,10 @@ Table chart_table(const Chart& chart) {
         TableRow row;
         row.cells.push_back(chart.labels[i]);
         for (const Chart::Series& series : chart.series) {
-            row.cells.push_back(value_at(series.values, i));
+            row.cells.push_back(value_at(series.values, i, series.low.empty() && counts_only(series)));
             if (!series.low.empty()) {
-                row.cells.push_back(value_at(series.low, i));
-                row.cells.push_back(value_at(series.high, i));
+                row.cells.push_back(value_at(series.low, i, false));
+                row.cells.push_back(value_at(series.high, i, false));
             }
         }
         table.rows.push_back(std::move(row));
