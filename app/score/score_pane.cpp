@@ -12,6 +12,8 @@
 #include "app/common/text.h"
 #include "app/score/hypothesis_panel.h"
 #include "core/inheritance/catalogue.h"
+#include "core/inheritance/class_order.h"
+#include "core/report/cross_analysis.h"
 
 namespace filial::app {
 
@@ -147,7 +149,9 @@ void ScorePane::refresh() {
         arrange();
         return;
     }
-    blank_->setNotation(QString::fromStdString(cross->hypothesis.notation));
+    const auto bound = report::bound_hypothesis(*cross);
+    blank_->setNotation(QString::fromStdString(bound ? inheritance::notation_in_class_order(bound.value())
+                                                     : cross->hypothesis.notation));
     QStringList meaning;
     if (const QString means = meaningOf(cross->hypothesis); !means.isEmpty())
         meaning << means;

@@ -5,6 +5,7 @@
 #include <cmath>
 
 #include "core/fit/intervals.h"
+#include "core/inheritance/class_order.h"
 
 namespace filial::fit {
 namespace {
@@ -63,7 +64,7 @@ std::optional<Tail> deciding_p(const GoodnessOfFit& result) {
 }
 
 void set_verdict(GoodnessOfFit& result, const Sample& sample) {
-    const Argument ratio = ratio_argument(result.input.hypothesis.notation());
+    const Argument ratio = ratio_argument(inheritance::notation_in_class_order(result.input.hypothesis));
     if (sample.n > 0 && impossible(sample))
         return set_impossible(result, sample, ratio);
     const std::optional<Tail> p = deciding_p(result);

@@ -428,6 +428,8 @@ TEST_F(ScoreDeskTest, TermsAreBoundToClassesByKeyAndByDrag) {
     press(Qt::Key_Down, Qt::AltModifier);
     QTest::mouseClick(window_->findChild<QPushButton*>("use-hypothesis"), Qt::LeftButton);
     EXPECT_EQ(cross().hypothesis.binding, (std::vector<std::size_t>{1, 0}));
+    EXPECT_EQ(window_->findChild<QPushButton*>("hypothesis-blank")->text(), "1:3") << "in the order of the classes";
+    EXPECT_TRUE(words("verdict").contains("1:3")) << words("verdict").toStdString();
     EXPECT_EQ(words("chi-square-statistic"), statisticText(workbook_->analysis().totals->chi_square->statistic));
 }
 
