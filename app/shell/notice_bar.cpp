@@ -12,7 +12,8 @@
 namespace filial::app {
 
 NoticeBar::NoticeBar(QWidget* parent)
-    : QFrame(parent), glyph_(new QLabel), text_(new QLabel), dismiss_(new QPushButton(tr("Dismiss"))) {
+    : QFrame(parent), glyph_(new QLabel), text_(new QLabel), act_(new QPushButton),
+      dismiss_(new QPushButton(tr("Dismiss"))) {
     auto* row = new QHBoxLayout(this);
     row->setContentsMargins(space::kL, space::kXs, space::kL, space::kXs);
     row->setSpacing(space::kM);
@@ -21,9 +22,17 @@ NoticeBar::NoticeBar(QWidget* parent)
     text_->setWordWrap(true);
     text_->setTextInteractionFlags(Qt::TextSelectableByMouse);
     setLook(dismiss_, look::kQuiet);
+    act_->setObjectName("notice-act");
+    act_->hide();
+    connect(act_, &QPushButton::clicked, this, [this] {
+        hide();
+        if (offered_)
+            offered_();
+    });
     connect(dismiss_, &QPushButton::clicked, this, &QWidget::hide);
     row->addWidget(glyph_);
     row->addWidget(text_, 1);
+    row->addWidget(act_);
     row->addWidget(dismiss_);
     setAccessibleName(tr("Notice"));
     hide();
@@ -38,9 +47,16 @@ void NoticeBar::show(Kind kind, const QString& sentence) {
     if (!capital.isEmpty())
         capital[0] = capital[0].toUpper();
     text_->setText(capital);
+    act_->hide();
     setVisible(true);
     QAccessibleEvent alert(text_, QAccessible::Alert);
     QAccessible::updateAccessibility(&alert);
+}
+
+void NoticeBar::offer(const QString& words, std::function<void()> act) {
+    offered_ = std::move(act);
+    act_->setText(words);
+    act_->show();
 }
 
 QString NoticeBar::sentence() const {

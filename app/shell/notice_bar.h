@@ -1,6 +1,8 @@
 // SPDX-License-Identifier: GPL-3.0-or-later
 #pragma once
 
+#include <functional>
+
 #include <QFrame>
 
 class QLabel;
@@ -17,6 +19,8 @@ public:
     enum class Kind { Note, Warning, Error };
     explicit NoticeBar(QWidget* parent = nullptr);
     void show(Kind kind, const QString& sentence);
+    /// A button beside the sentence until the next one; the bar goes when it is pressed.
+    void offer(const QString& words, std::function<void()> act);
     QString sentence() const;
 
 protected:
@@ -25,7 +29,9 @@ protected:
 private:
     QLabel* glyph_;
     QLabel* text_;
+    QPushButton* act_;
     QPushButton* dismiss_;
+    std::function<void()> offered_;
 };
 
 } // namespace filial::app

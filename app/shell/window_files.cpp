@@ -87,6 +87,11 @@ void Window::tellOpened() {
     if (!sentences.isEmpty())
         notice_->show(session.read_only() ? NoticeBar::Kind::Warning : NoticeBar::Kind::Note,
                       sentences.join(QLatin1Char(' ')));
+    if (session.recovered_entries() > 0 && !session.read_only() && !session.path().empty())
+        notice_->offer(tr("Revert"), [this] {
+            if (workbook_ != nullptr) // the book may have been closed since
+                workbook_->revertToSaved();
+        });
 }
 
 bool Window::openPath(const QString& path) {

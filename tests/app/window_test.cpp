@@ -156,6 +156,13 @@ TEST_F(WindowTest, KeptChangesAreRecoveredAndSaid) {
     ASSERT_TRUE(window.openPath(file));
     EXPECT_EQ(window.workbook()->currentCross()->name, "kept for later");
     EXPECT_TRUE(window.notice().contains("Recovered 1 change that")) << window.notice().toStdString();
+    auto* revert = window.findChild<QAbstractButton*>("notice-act");
+    ASSERT_NE(revert, nullptr);
+    revert->click();
+    EXPECT_NE(window.workbook()->currentCross()->name, "kept for later");
+    EXPECT_TRUE(window.notice().isEmpty());
+    window.workbook()->undo();
+    EXPECT_EQ(window.workbook()->currentCross()->name, "kept for later");
     EXPECT_EQ(window.savedState(), "Changes not saved");
     answers_.choice = 2;
     ASSERT_TRUE(window.closeBook());
