@@ -317,6 +317,19 @@ void ScorePane::arrangeHead(int left, int width) {
     sub_->say(QFontMetrics(sub_->font()).elidedText(meaning_, Qt::ElideRight, sub_->width()), meaning_);
 }
 
+void ScorePane::showPictures(bool pictured) {
+    for (QWidget* button : std::initializer_list<QWidget*>{show_map_, show_chart_, as_table_})
+        button->setVisible(pictured);
+    map_->setVisible(pictured && show_map_->isChecked() && !as_table_->isChecked());
+    const bool stale = !chart_->isVisible() && !twin_->isVisible();
+    chart_->setVisible(pictured && show_chart_->isChecked() && !as_table_->isChecked());
+    twin_->setVisible(pictured && as_table_->isChecked());
+    if (stale && chart_->isVisible())
+        refreshChart();
+    if (stale && twin_->isVisible())
+        refreshTwin();
+}
+
 void ScorePane::arrange() {
     const int left = space::kXl;
     const int width = this->width() - 2 * space::kXl;
@@ -366,16 +379,7 @@ void ScorePane::arrange() {
     map_->setGeometry(picture);
     chart_->setGeometry(picture);
     twin_->setGeometry(picture);
-    for (QWidget* button : std::initializer_list<QWidget*>{show_map_, show_chart_, as_table_})
-        button->setVisible(pictured);
-    map_->setVisible(pictured && show_map_->isChecked() && !as_table_->isChecked());
-    const bool stale = !chart_->isVisible() && !twin_->isVisible();
-    chart_->setVisible(pictured && show_chart_->isChecked() && !as_table_->isChecked());
-    twin_->setVisible(pictured && as_table_->isChecked());
-    if (stale && chart_->isVisible())
-        refreshChart();
-    if (stale && twin_->isVisible())
-        refreshTwin();
+    showPictures(pictured);
     if (panel_->isVisible())
         panel_->place(blank_->geometry());
 }

@@ -42,6 +42,7 @@ private:
     void refreshChart();
     void split(std::size_t join);
     void arrange();
+    void showPictures(bool pictured); ///< the chosen one, or none in a low window
     void arrangeHead(int left, int width);
     void showPicture();
 
