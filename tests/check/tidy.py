@@ -1,7 +1,7 @@
 #!/usr/bin/python3
 # SPDX-License-Identifier: GPL-3.0-or-later
 """tidy.py BUILD JOBS [--all]: clang-tidy-14 of changed files. Changed are the files that differ from where this branch
-left origin/main (or FILIAL_TIDY_BASE), uncommitted ones included. On main itself nothing differs: then the files of the
+left origin/main (or FILIAL_TIDY_BASE), uncommitted ones included. Where no source differs, as on main itself, the files of the
 latest commits count, newest first, up to MOST. A header is checked through the source file beside it."""
 import concurrent.futures
 import json
@@ -18,14 +18,6 @@ def git(*arguments):
     return done.stdout.split("\n") if done.returncode == 0 else []
 
 
-def changed_names():
-    base = os.environ.get("FILIAL_TIDY_BASE") or next(iter(git("merge-base", "HEAD", "origin/main")), "")
-    names = git("diff", "--name-only", base) + git("ls-files", "--others", "--exclude-standard") if base else []
-    if any(names):
-        return names, f"changed since {base[:9]}"
-    return git("log", "--format=", "--name-only", "-n", "200"), "of the latest commits"
-
-
 def sources(names, known):
     picked = []
     for name in names:
@@ -34,6 +26,14 @@ def sources(names, known):
         if source in known and source not in picked:
             picked.append(source)
     return picked
+
+
+def changed_names(known):
+    base = os.environ.get("FILIAL_TIDY_BASE") or next(iter(git("merge-base", "HEAD", "origin/main")), "")
+    names = git("diff", "--name-only", base) + git("ls-files", "--others", "--exclude-standard") if base else []
+    if sources(names, known):
+        return names, f"changed since {base[:9]}"
+    return git("log", "--format=", "--name-only", "-n", "200"), "of the latest commits"
 
 
 def tidy(build, source):
@@ -48,7 +48,7 @@ def main():
     with open(os.path.join(build, "compile_commands.json"), encoding="utf-8") as text:
         known = {os.path.relpath(entry["file"], top) for entry in json.load(text)}
     known = {name for name in known if not name.startswith(".")}
-    names, what = (sorted(known), "in all") if everything else changed_names()
+    names, what = (sorted(known), "in all") if everything else changed_names(known)
     picked = sources(names, known)
     if not everything:
         picked = picked[:MOST]
