@@ -30,7 +30,7 @@ void BookCard::setCross(const book::Cross& cross) {
     double all = 0.0;
     for (const book::Family& family : cross.families)
         for (std::size_t i = 0; i < shares_.size(); ++i)
-            if (const book::Cell cell = family.cell(ClassIndex(i)); cell.state == book::CellState::Number) {
+            if (const book::Cell cell = family.cell(ClassIndex{i}); cell.state == book::CellState::Number) {
                 const auto plants = static_cast<double>(cell.count.value());
                 shares_[i] += plants;
                 all += plants;

@@ -23,7 +23,7 @@ void ClassPreview::setCross(book::Cross cross) {
             terms_ << QString::fromStdString(read.value().term_text(i));
     QStringList spoken;
     for (std::size_t i = 0; i < cross_.classes.size(); ++i)
-        spoken << QString::fromStdString(cross_.class_label(ClassIndex(i)));
+        spoken << QString::fromStdString(cross_.class_label(ClassIndex{i}));
     setAccessibleName(tr("Classes: %1").arg(spoken.join(QStringLiteral(", "))));
     // A scroll area asks for no height for width: the room is kept as a minimum.
     setMinimumHeight(heightForWidth(std::max(width(), 2 * kCell)));
@@ -59,7 +59,7 @@ void ClassPreview::paintEvent(QPaintEvent* /*event*/) {
         paintSwatch(painter, QRectF(cell.left(), cell.top() + 6, 16, 16), classStyle(cross_, i));
         painter.setFont(app::font(TextRole::Body));
         painter.setPen(tokens().ink);
-        const QString label = QString::fromStdString(cross_.class_label(ClassIndex(i)));
+        const QString label = QString::fromStdString(cross_.class_label(ClassIndex{i}));
         const QRect body = cell.adjusted(space::kXl, 0, 0, 0);
         const int room = terms_.isEmpty() ? body.width() : body.width() - 60;
         const QString shown = painter.fontMetrics().elidedText(label, Qt::ElideRight, room);

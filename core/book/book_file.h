@@ -12,7 +12,7 @@
 namespace filial::book {
 
 inline constexpr int kFileVersion = 1;
-inline constexpr std::size_t kLargestFile = 512u * 1024u * 1024u; ///< bytes; larger is refused before reading
+inline constexpr std::size_t kLargestFile = std::size_t{512} * 1024 * 1024; ///< bytes; larger is refused before reading
 
 struct OpenedBook {
     Book book;

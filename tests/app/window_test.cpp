@@ -313,7 +313,7 @@ TEST_F(WindowTest, DroppedTableBecomesACross) {
     ASSERT_NE(window.workbook(), nullptr) << window.notice().toStdString();
     ASSERT_NE(window.workbook()->currentCross(), nullptr);
     EXPECT_EQ(window.workbook()->currentCross()->families.size(), 2U);
-    EXPECT_EQ(window.workbook()->currentCross()->families[0].cell(ClassIndex(0)).count.value(), 30);
+    EXPECT_EQ(window.workbook()->currentCross()->families[0].cell(ClassIndex{0}).count.value(), 30);
 }
 
 TEST_F(WindowTest, ReportIsWrittenAndAFailureIsSaid) {
