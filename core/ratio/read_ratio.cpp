@@ -169,7 +169,9 @@ Result<Term> read_fraction(const Token& token, std::size_t index) {
 }
 
 Result<Term> read_term(const Token& token, std::size_t index) {
-    if (token.text.size() > kLongestTerm && is_digit(token.text.front()))
+    // A leading point is kept with a 0 before it, which counts.
+    const bool bare_point = !token.text.empty() && token.text.front() == '.';
+    if (token.text.size() + (bare_point ? 1 : 0) > kLongestTerm && (bare_point || is_digit(token.text.front())))
         return refusal_at(MessageId::RatioTooFine, token.place);
     if (token.text.find('/') != std::string_view::npos)
         return read_fraction(token, index);

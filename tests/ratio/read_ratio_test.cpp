@@ -96,6 +96,7 @@ INSTANTIATE_TEST_SUITE_P(
         Refused{"4611686018427387904:1", MessageId::RatioTooFine, 0},      // sum 2^62 + 1
         Refused{"0.00000000000000000001:1", MessageId::RatioTooFine, 0},
         Refused{std::string(5000, '9') + ":1", MessageId::RatioTooFine, 0},
+        Refused{"1 .5" + std::string(58, '0'), MessageId::RatioTooFine, 2}, // 61 characters with the 0 before its point
         Refused{many_terms(65), MessageId::RatioTooManyTerms, 128}));
 
 TEST(Ratio, HoldsUpToTwoToThe62) {
